@@ -1,0 +1,7 @@
+package optimize
+
+import "context"
+
+func runSimplex(ctx context.Context, s *session, set Settings) error {
+	return errExhausted
+}
