@@ -1,0 +1,129 @@
+package studies
+
+import (
+	"hotfront/model"
+	"hotfront/model/drive"
+	"hotfront/model/gas"
+	"hotfront/model/metal"
+)
+
+// Defaults below are common practice without a source unless a row says otherwise, and so are the
+// usual ranges: typical figures of small heat-and-power, solar and low-temperature machines taken
+// together, from memory. Hard ranges only keep out what cannot be meant.
+
+func layoutNames() []string { return []string{"alpha", "beta", "gamma"} }
+
+func matrixNames() []string { return []string{"woven-screen", "random-fibre"} }
+
+func driveNames() []string {
+	return []string{drive.Sinusoidal.String(), drive.SliderCrank.String(), drive.Rhombic.String()}
+}
+
+func gasNames() []string {
+	var names []string
+	for _, k := range gas.Kinds() {
+		names = append(names, k.String())
+	}
+	return names
+}
+
+func alloyNames() []string {
+	var names []string
+	for _, a := range metal.Alloys() {
+		names = append(names, a.String())
+	}
+	return names
+}
+
+func whenPhase() Condition {
+	return Condition{"to sinusoidal and slider-crank drives", func(e *model.Engine) bool { return e.Drive.Kind != drive.Rhombic }}
+}
+
+func whenRod() Condition {
+	return Condition{"to slider-crank and rhombic drives", func(e *model.Engine) bool { return e.Drive.Kind != drive.Sinusoidal }}
+}
+
+func whenRhombic() Condition {
+	return Condition{"to rhombic drives", func(e *model.Engine) bool { return e.Drive.Kind == drive.Rhombic }}
+}
+
+func whenDisplacerStroke() Condition {
+	return Condition{"to beta and gamma machines without a rhombic drive, whose strokes follow from the drive",
+		func(e *model.Engine) bool { return e.Layout != model.Alpha && e.Drive.Kind != drive.Rhombic }}
+}
+
+// machineFields are layout, gas, drive, pistons and spaces.
+func machineFields() []Field {
+	displacer := func(e *model.Engine) *model.Reciprocator { return &e.Displacer }
+	piston := func(e *model.Engine) *model.Reciprocator { return &e.Piston }
+	expansion := func(e *model.Engine) *model.Reciprocator { return &e.ExpansionPiston }
+	compression := func(e *model.Engine) *model.Reciprocator { return &e.CompressionPiston }
+
+	rows := []Field{
+		choice("layout", "arrangement of pistons and cylinders", layoutNames(),
+			func(e *model.Engine) *model.Layout { return &e.Layout }, fixed),
+		choice("gas", "working gas", gasNames(), func(e *model.Engine) *gas.Kind { return &e.Gas }),
+		measured("charge_pressure", "time mean of the working pressure over a cycle", Pressure, "bar", "0.1 bar to 500 bar", "1 bar to 250 bar",
+			func(e *model.Engine) *float64 { return &e.ChargePressure }),
+		measured("speed", "revolutions", Frequency, "rpm", "1 rpm to 20000 rpm", "100 rpm to 4500 rpm",
+			func(e *model.Engine) *float64 { return &e.Speed }),
+		choice("drive.kind", "mechanism that moves the pistons", driveNames(),
+			func(e *model.Engine) *drive.Kind { return &e.Drive.Kind }, fixed),
+		measured("drive.phase_angle", "lead of the expansion volume over the compression volume", Angle, "deg", "1 deg to 179 deg", "50 deg to 130 deg",
+			func(e *model.Engine) *float64 { return &e.Drive.PhaseAngle }, when(whenPhase())),
+		measured("drive.rod_length", "length of the connecting rods", Length, "mm", "1 mm to 5 m", "20 mm to 1 m",
+			func(e *model.Engine) *float64 { return &e.Drive.RodLength }, when(whenRod())),
+		measured("drive.crank_radius", "radius of the cranks", Length, "mm", "1 mm to 2 m", "5 mm to 200 mm",
+			func(e *model.Engine) *float64 { return &e.Drive.CrankRadius }, when(whenRhombic())),
+		measured("drive.eccentricity", "distance of the crank axes from the cylinder axis", Length, "mm", "0.1 mm to 2 m", "5 mm to 300 mm",
+			func(e *model.Engine) *float64 { return &e.Drive.Eccentricity }, when(whenRhombic())),
+	}
+	rows = append(rows, moving("displacer", "displacer", displacer, whenDisplacer(), whenDisplacerStroke())...)
+	rows = append(rows,
+		measured("displacer.rod", "diameter of the displacer rod through the compression space, 0 for none", Length, "mm", "0 mm to 500 mm", "0 mm to 60 mm",
+			func(e *model.Engine) *float64 { return &e.Displacer.Rod }, when(whenDisplacer()), defaults("0 mm")))
+	rows = append(rows, hotBody("displacer", "displacer", displacer, whenDisplacer())...)
+	rows = append(rows, moving("piston", "piston", piston, whenDisplacer(), whenDisplacerStroke())...)
+	rows = append(rows, moving("expansion_piston", "expansion piston", expansion, whenAlpha(), whenAlpha())...)
+	rows = append(rows, hotBody("expansion_piston", "dome of the expansion piston", expansion, whenAlpha())...)
+	rows = append(rows, moving("compression_piston", "compression piston", compression, whenAlpha(), whenAlpha())...)
+	rows = append(rows,
+		measured("expansion_space.clearance", "expansion space at its smallest", Volume, "cm3", "0 cm3 to 100 l", "0.2 cm3 to 5 l",
+			func(e *model.Engine) *float64 { return &e.ExpansionClearance }),
+		measured("compression_space.clearance", "compression space at its smallest", Volume, "cm3", "0 cm3 to 100 l", "0.2 cm3 to 5 l",
+			func(e *model.Engine) *float64 { return &e.CompressionClearance }),
+		measured("buffer_space.volume", "mean volume behind the piston, 0 for a large one of constant pressure", Volume, "l", "0 l to 10 m3", "",
+			func(e *model.Engine) *float64 { return &e.BufferVolume }, defaults("0 l")))
+	for i := range rows {
+		if rows[i].Path == "piston.bore" {
+			tiedTo("displacer.bore", whenBeta())(&rows[i])
+		}
+	}
+	return rows
+}
+
+// moving are the rows that every piston and displacer has.
+func moving(prefix, name string, at func(*model.Engine) *model.Reciprocator, c, stroke Condition) []Field {
+	return []Field{
+		measured(prefix+".bore", "bore of the cylinder of the "+name, Length, "mm", "2 mm to 3 m", "20 mm to 500 mm",
+			func(e *model.Engine) *float64 { return &at(e).Bore }, when(c)),
+		measured(prefix+".stroke", "stroke of the "+name, Length, "mm", "1 mm to 2 m", "5 mm to 300 mm",
+			func(e *model.Engine) *float64 { return &at(e).Stroke }, when(stroke)),
+		measured(prefix+".seal_gap", "radial gap that stands for the leakage of the seal, 0 for tight", Length, "mm", "0 mm to 2 mm", "0 mm to 0.1 mm",
+			func(e *model.Engine) *float64 { return &at(e).SealGap }, when(c), defaults("0.01 mm")),
+		measured(prefix+".seal_length", "length of that seal", Length, "mm", "0.5 mm to 1 m", "3 mm to 150 mm",
+			func(e *model.Engine) *float64 { return &at(e).SealLength }, when(c), defaults("15 mm")),
+	}
+}
+
+// hotBody are the rows of a displacer or of the dome of an expansion piston.
+func hotBody(prefix, name string, at func(*model.Engine) *model.Reciprocator, c Condition) []Field {
+	return []Field{
+		measured(prefix+".length", "length of the "+name+" from hot face to seal", Length, "mm", "5 mm to 3 m", "30 mm to 600 mm",
+			func(e *model.Engine) *float64 { return &at(e).Length }, when(c)),
+		measured(prefix+".gap", "radial gap between the "+name+" and the cylinder", Length, "mm", "0.01 mm to 20 mm", "0.1 mm to 2 mm",
+			func(e *model.Engine) *float64 { return &at(e).Gap }, when(c)),
+		measured(prefix+".wall", "wall thickness of the "+name, Length, "mm", "0.1 mm to 50 mm", "0.3 mm to 5 mm",
+			func(e *model.Engine) *float64 { return &at(e).Wall }, when(c), defaults("1 mm")),
+	}
+}
