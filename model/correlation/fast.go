@@ -18,7 +18,7 @@ type Fast struct {
 	frictionLow, frictionHigh float64 // f at both ends of the blend [-]
 }
 
-// NewFast builds the tables (some 25 microseconds a thousand points; once per workspace).
+// NewFast builds the tables. It takes about half a millisecond, so once per workspace or process.
 func NewFast() *Fast {
 	power := func(p float64) func(float64) float64 {
 		return func(x float64) float64 { return math.Pow(x, p) }

@@ -60,21 +60,34 @@ func extremesSliderCrank(m *Mechanism) Extremes {
 }
 
 // smallestGap finds the smallest value over a turn of sign*(Y1 - Y2) and its angle. The gap holds few
-// harmonics, so a grid of 5 degrees brackets its lowest point; Newton's method, kept inside the bracket
-// by bisection, then takes the slope to zero.
+// harmonics, so every low point shows on a grid of 5 degrees; each is refined, since two of them may be
+// nearly equal.
 func smallestGap(m *Mechanism, sign float64) (gap, at float64) {
 	const n = 72
 	const step = 2 * math.Pi / n
+	var grid [n]float64
 	var mo Motion
+	for i := range grid {
+		m.At(&mo, float64(i)*step)
+		grid[i] = sign * (mo.Y1 - mo.Y2)
+	}
 	gap = math.Inf(1)
-	for i := range n {
-		theta := float64(i) * step
-		m.At(&mo, theta)
-		if g := sign * (mo.Y1 - mo.Y2); g < gap {
-			gap, at = g, theta
+	for i, g := range grid {
+		if g > grid[(i+n-1)%n] || g > grid[(i+1)%n] {
+			continue
+		}
+		if refined, theta := lowPoint(m, sign, float64(i)*step, step); refined < gap {
+			gap, at = refined, theta
 		}
 	}
-	low, high, theta := at-step, at+step, at
+	return gap, turn(at)
+}
+
+// lowPoint takes the slope of sign*(Y1 - Y2) to zero inside theta -+ step by Newton's method, kept inside
+// the bracket by bisection.
+func lowPoint(m *Mechanism, sign, theta, step float64) (gap, at float64) {
+	low, high := theta-step, theta+step
+	var mo Motion
 	for range 60 {
 		m.At(&mo, theta)
 		slope, curve := sign*(mo.V1-mo.V2), sign*(mo.A1-mo.A2)
@@ -87,7 +100,7 @@ func smallestGap(m *Mechanism, sign float64) (gap, at float64) {
 			high = theta
 		}
 		next := theta - slope/curve
-		if !(next > low && next < high) { // also where curve is zero
+		if !(next > low && next < high) { // also where the curvature is zero
 			next = 0.5 * (low + high)
 		}
 		if math.Abs(next-theta) < 1e-15*math.Pi {
@@ -96,8 +109,5 @@ func smallestGap(m *Mechanism, sign float64) (gap, at float64) {
 		theta = next
 	}
 	m.At(&mo, theta)
-	if g := sign * (mo.Y1 - mo.Y2); g <= gap {
-		gap, at = g, theta
-	}
-	return gap, turn(at)
+	return sign * (mo.Y1 - mo.Y2), theta
 }
