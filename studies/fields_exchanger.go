@@ -1,6 +1,8 @@
 package studies
 
 import (
+	"math"
+
 	"hotfront/model"
 	"hotfront/model/metal"
 )
@@ -23,7 +25,7 @@ func exchangerFields() []Field {
 			Path: "heater.unheated_length", Text: "length of a heater tube that takes up no heat, both ends together; in place of heated_length",
 			Quantity: Length, Unit: "mm", Hard: parseRange("0 mm to 10 m", Length), Usual: parseRange("0 mm to 300 mm", Length),
 			Group: "heated", Freeable: true,
-			get: func(e *model.Engine) float64 { return e.Heater.TubeLength - e.Heater.HeatedLength },
+			get: func(e *model.Engine) float64 { return lessLength(e.Heater.TubeLength, e.Heater.HeatedLength) },
 			set: func(e *model.Engine, v float64) { e.Heater.HeatedLength = e.Heater.TubeLength - v },
 		},
 		measured("heater.end_loss", "loss coefficients of entry, exit and bends of a heater tube together", Number, "-", "0 to 50", "0.5 to 6",
@@ -74,7 +76,7 @@ func exchangerFields() []Field {
 			Path: "cooler.uncooled_length", Text: "length of a cooler tube that gives off no heat, both ends together; in place of cooled_length",
 			Quantity: Length, Unit: "mm", Hard: parseRange("0 mm to 10 m", Length), Usual: parseRange("0 mm to 100 mm", Length),
 			Group: "cooled", Freeable: true,
-			get: func(e *model.Engine) float64 { return e.Cooler.TubeLength - e.Cooler.CooledLength },
+			get: func(e *model.Engine) float64 { return lessLength(e.Cooler.TubeLength, e.Cooler.CooledLength) },
 			set: func(e *model.Engine, v float64) { e.Cooler.CooledLength = e.Cooler.TubeLength - v },
 		},
 		measured("cooler.end_loss", "loss coefficients of entry, exit and bends of a cooler tube together", Number, "-", "0 to 50", "0.5 to 6",
@@ -94,6 +96,10 @@ func exchangerFields() []Field {
 	rows = append(rows, ductFields("cold_duct", "between regenerator and cooler", func(e *model.Engine) *model.Duct { return &e.ColdDuct })...)
 	return append(rows, ductFields("compression_duct", "between cooler and compression space", func(e *model.Engine) *model.Duct { return &e.CompressionDuct })...)
 }
+
+// lessLength is the difference of two lengths to a picometre: 300 mm less 250 mm is 50 mm and not
+// 49.999999999999986 mm.
+func lessLength(a, b float64) float64 { return math.Round((a-b)*1e12) / 1e12 }
 
 func ductFields(prefix, place string, at func(*model.Engine) *model.Duct) []Field {
 	return []Field{

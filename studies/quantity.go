@@ -173,20 +173,20 @@ func parseQuantity(text string, q Quantity) (float64, *fault) {
 	return v, nil
 }
 
-// parseAny reads a number with any unit. A number without one has quantity ok to anything (bare).
-func parseAny(text string) (v float64, q Quantity, affine, bare bool, f *fault) {
+// parseAny reads a number with any unit; bare says that it had none.
+func parseAny(text string) (v float64, u unit, bare bool, f *fault) {
 	number, rest, f := splitNumber(text)
 	if f != nil {
-		return 0, 0, false, false, f
+		return 0, unit{}, false, f
 	}
 	if rest == "" {
-		return number, Number, false, true, nil
+		return number, unit{}, true, nil
 	}
 	u, known := unitOf(rest, Number)
 	if !known {
-		return 0, 0, false, false, unknownUnit(rest, quantities)
+		return 0, unit{}, false, unknownUnit(rest, quantities)
 	}
-	return u.si(number), u.quantity, u.offset != 0, false, nil
+	return u.si(number), u, false, nil
 }
 
 func wanted(q Quantity) string {
