@@ -25,5 +25,7 @@
 //
 // The coefficients of each gas are in a file of its own, with the published correlations to whose
 // values they are fitted and the worst errors. Nothing is clamped: At and Transport compute at any
-// positive T and p, and Range tells where the result has been checked.
+// positive T and p, and Range tells where the result has been checked. Beyond it the forms stay
+// physical (v falls with p, rises with T, positive cp) from 225 to 1600 K and up to 300 bar; farther out, such
+// as nitrogen at 200 K and 260 bar, they do not, so callers must not let a state wander there.
 package gas

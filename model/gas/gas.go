@@ -10,6 +10,8 @@ const (
 	Helium
 	Nitrogen
 	Air
+
+	perfect Kind = 0xff // of Perfect; New does not know it
 )
 
 // Kinds returns every gas, in the order of their constants.
@@ -26,6 +28,8 @@ func (k Kind) String() string {
 		return "nitrogen"
 	case Air:
 		return "air"
+	case perfect:
+		return "perfect gas"
 	}
 	return "unknown gas"
 }
@@ -96,7 +100,7 @@ type State struct {
 // referenceTemperature is where the enthalpy of the dilute gas is zero [K].
 const referenceTemperature = 298.15
 
-// New returns the properties of a gas.
+// New returns the properties of a gas. It panics on a kind that is none of Kinds.
 func New(k Kind) Gas {
 	var g Gas
 	switch k {
@@ -120,9 +124,9 @@ func New(k Kind) Gas {
 // properties, for comparison with closed-form results.
 //
 // R gas constant [J/(kg K)], gamma ratio of the specific heats [-], mu viscosity [Pa s],
-// k conductivity [W/(m K)]. Its Kind is Helium's only by name: no coefficient of helium is used.
+// k conductivity [W/(m K)]. Its Kind is none of Kinds.
 func Perfect(R, gamma, mu, k float64) Gas {
-	g := Gas{Kind: Helium, R: R, A0: R * gamma / (gamma - 1)}
+	g := Gas{Kind: perfect, R: R, A0: R * gamma / (gamma - 1)}
 	g.Range = Range{TemperatureLow: 0, TemperatureHigh: math.Inf(1), PressureHigh: math.Inf(1)}
 	g.H0 = -g.enthalpyIntegral(referenceTemperature)
 	g.Viscosity.Y0 = mu

@@ -28,8 +28,8 @@ func (r *Rupture) log10Stress(P float64) (value, slope float64) {
 // equation of the package comment. It is never above the short-time tensile strength at T.
 // inRange is false where the parameter lies outside the rows of the fit.
 //
-// Source: [LarsonMiller]; data [CreepTable]. Accuracy: 10 % against each row in use; the scatter
-// of heats is larger, commonly taken as 20 % on stress.
+// Source: [LarsonMiller1952]; rows of testdata/reference/alloy_creep_rupture.csv. Accuracy: 10 %
+// against each row in use; the scatter of heats is larger, commonly taken as 20 % on stress.
 func (p *Properties) RuptureStress(T, seconds float64) (stress float64, inRange bool) {
 	P := parameter(T, seconds)
 	v, _ := p.Rupture.log10Stress(P)

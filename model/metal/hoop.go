@@ -9,7 +9,8 @@ package metal
 // largest hoop stress of the wall when pInner > pOuter. For a thin wall it tends to
 // (pi - po) r/wall.
 //
-// Source: [Lame]
+// Source: [Timoshenko1956], chapter on thick-walled cylinders, from memory; the tests check it by
+// equilibrium
 func HoopStressBore(pInner, pOuter, rInner, rOuter float64) float64 {
 	i2, o2 := rInner*rInner, rOuter*rOuter
 	return (pInner*(o2+i2) - 2*pOuter*o2) / (o2 - i2)
