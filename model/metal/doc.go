@@ -14,7 +14,8 @@
 // carry N06625, N06002, N06600, N06601, N08810, N08330 and S30815 (a straight line each), five
 // S30400, S31000 and S31600, 22 N06230. Outside the parameter range of an alloy's rows the curve goes on along its
 // end tangent, and the result is marked as outside the range. An alloy is offered only where its rows
-// let a fit be checked, so one with two rows (S34700, S30908) is not.
+// let a fit be checked, so one with two rows (S34700, S30908) is not. The rows come from [NickelSheet],
+// and for the stainless steels also from [ASM1990] and [SupplierSheet].
 //
 // The strength of a short load is held beside it: tensile and 0.2 % yield strength against
 // temperature. They and the physical properties are typical handbook values from memory, no better
