@@ -69,7 +69,8 @@ func (g *Gas) At(s *State, T, p float64) {
 //	a^2 = -v^2 / (dv/dp)_s,  (dv/dp)_s = dv/dp + T (dv/dT)^2 / cp
 //
 // It follows from the Maxwell relations and is exact for the equation of state in use. Against
-// the published correlations it is good to 0.2 % in the checked range.
+// the published correlations of hydrogen, nitrogen and air it is good to 0.4 % from 275 K up; at
+// 250 K and 200 bar it is 1.3 % off for nitrogen and air.
 func (g *Gas) SoundSpeed(T, p float64) float64 {
 	var s State
 	g.At(&s, T, p)
