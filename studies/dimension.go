@@ -26,7 +26,7 @@ func (q Quantity) dimension() dimension {
 		return dimension{0, 0, -1, 0}
 	case Power:
 		return dimension{2, 1, -3, 0}
-	case Torque:
+	case Torque, Energy:
 		return dimension{2, 1, -2, 0}
 	case Duration:
 		return dimension{0, 0, 1, 0}

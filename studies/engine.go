@@ -226,7 +226,7 @@ func (r *reader) lengths(e *model.Engine) {
 		}
 		if length > tube*(1+1e-12) || length <= 0 {
 			r.fault(s.place, "engine."+part+"."+long, &fault{Contradiction,
-				fmt.Sprintf("does not go with a tube length of %s mm", FormatSI(tube, Length, "mm", 4)), ""})
+				fmt.Sprintf("does not go with a tube length of %s", shown(tube, Length, "mm")), ""})
 		}
 	}
 	if e.Heater.TubeLength > 0 {

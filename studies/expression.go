@@ -278,37 +278,37 @@ func (c *compiler) binary(n *ast.BinaryNode) result {
 	if !ok {
 		return c.fail(n, ExprSyntax, fmt.Sprintf("%q is not used in formulas", n.Operator), "compare by max: and min:")
 	}
-	a, b := c.node(n.Left), c.node(n.Right)
+	x, y := c.node(n.Left), c.node(n.Right)
 	if c.fault != nil {
 		return result{}
 	}
 	c.emit(operation{code: code}, -1)
-	r := result{constant: a.constant && b.constant}
+	r := result{constant: x.constant && y.constant}
 	switch code {
 	case opAdd, opSubtract:
-		if !a.dimension.equal(b.dimension) {
-			return c.mismatch(n, n.Operator, a, b)
+		if !x.dimension.equal(y.dimension) {
+			return c.mismatch(n, n.Operator, x, y)
 		}
-		r.dimension, r.value = a.dimension, a.value+b.value
-		r.reading = a.reading != b.reading
+		r.dimension, r.value = x.dimension, x.value+y.value
+		r.reading = x.reading != y.reading
 		if code == opSubtract {
-			r.value = a.value - b.value
-			r.reading = a.reading && !b.reading
+			r.value = x.value - y.value
+			r.reading = x.reading && !y.reading
 		}
 	case opMultiply:
-		r.dimension, r.value = a.dimension.plus(b.dimension, 1), a.value*b.value
+		r.dimension, r.value = x.dimension.plus(y.dimension, 1), x.value*y.value
 	case opDivide:
-		r.dimension, r.value = a.dimension.plus(b.dimension, -1), a.value/b.value
+		r.dimension, r.value = x.dimension.plus(y.dimension, -1), x.value/y.value
 	case opPower:
-		if !b.dimension.equal(dimension{}) {
-			return c.fail(n, ExprDimension, fmt.Sprintf("an exponent must be a plain number, not a %s", b.dimension), "")
+		if !y.dimension.equal(dimension{}) {
+			return c.fail(n, ExprDimension, fmt.Sprintf("an exponent must be a plain number, not %s", article(y.dimension.String())), "")
 		}
-		r.value = math.Pow(a.value, b.value)
-		if !a.dimension.equal(dimension{}) {
-			if !b.constant || math.IsNaN(b.value) || math.Abs(b.value) > 12 {
-				return c.fail(n, ExprDimension, fmt.Sprintf("the exponent of a %s must be a number that is written out, at most 12", a.dimension), "")
+		r.value = math.Pow(x.value, y.value)
+		if !x.dimension.equal(dimension{}) {
+			if !y.constant || math.IsNaN(y.value) || math.Abs(y.value) > 12 {
+				return c.fail(n, ExprDimension, fmt.Sprintf("the exponent of %s must be a number that is written out, at most 12", article(x.dimension.String())), "")
 			}
-			r.dimension = r.dimension.plus(a.dimension, b.value)
+			r.dimension = r.dimension.plus(x.dimension, y.value)
 		}
 	}
 	return r
@@ -330,12 +330,12 @@ func binaryCode(operator string) (opcode, bool) {
 	return 0, false
 }
 
-func (c *compiler) mismatch(n ast.Node, between string, a, b result) result {
+func (c *compiler) mismatch(n ast.Node, between string, x, y result) result {
 	hint := ""
-	if a.dimension.equal(dimension{}) || b.dimension.equal(dimension{}) {
+	if x.dimension.equal(dimension{}) || y.dimension.equal(dimension{}) {
 		hint = "give a number its unit as a factor, as in 5*mm"
 	}
-	return c.fail(n, ExprDimension, fmt.Sprintf("%s between a %s and a %s", between, a.dimension, b.dimension), hint)
+	return c.fail(n, ExprDimension, fmt.Sprintf("%s between %s and %s", between, article(x.dimension.String()), article(y.dimension.String())), hint)
 }
 
 func (c *compiler) call(n *ast.CallNode) result {

@@ -53,7 +53,7 @@ func exchangerFields() []Field {
 			func(e *model.Engine) *float64 { return &e.Regenerator.Length }),
 		measured("regenerator.wire_diameter", "wire or fibre diameter", Length, "mm", "0.002 mm to 5 mm", "0.02 mm to 0.25 mm",
 			func(e *model.Engine) *float64 { return &e.Regenerator.WireDiameter }),
-		measured("regenerator.porosity", "share of the matrix that is open", Number, "-", "0.2 to 0.99", "0.55 to 0.92",
+		measured("regenerator.porosity", "share of the matrix that is open", Number, "-", "0.25 to 0.98", "0.55 to 0.92",
 			func(e *model.Engine) *float64 { return &e.Regenerator.Porosity }),
 		choice("regenerator.alloy", "alloy of the matrix (UNS number)", alloyNames(),
 			func(e *model.Engine) *metal.Alloy { return &e.Regenerator.Alloy }, defaults("S30400")),

@@ -141,7 +141,7 @@ func bound(l *Limit, text string, dim dimension, reading bool) (float64, *fault)
 	case bare:
 		return v, nil
 	case !u.quantity.dimension().equal(dim):
-		return 0, &fault{ExprDimension, fmt.Sprintf("the bound is a %s, the formula gives a %s", u.quantity, dim), ""}
+		return 0, &fault{ExprDimension, fmt.Sprintf("the bound is %s, the formula gives %s", article(u.quantity.String()), article(dim.String())), ""}
 	case u.offset != 0 && !reading:
 		return 0, &fault{ExprDimension, "the bound is a temperature reading, the formula gives a difference or a product", "write the bound in K"}
 	}

@@ -32,7 +32,7 @@ func distance(a, b string) int {
 
 // nearest gives the candidate nearest to a word, or "" when none is near: at most a third of the
 // letters may differ. Ties go to the first in the alphabet. A candidate whose last part equals the
-// word (tube_bore for heater.tube_bore) is near when nothing nearer is.
+// word (tube_bore for heater.tube_bore, efficiency for brake_efficiency) is near when nothing nearer is.
 func nearest(word string, candidates []string) string {
 	const longest = 60
 	if word == "" || len(word) > longest {
@@ -54,7 +54,7 @@ func nearest(word string, candidates []string) string {
 		return best
 	}
 	for _, c := range sorted {
-		if strings.HasSuffix(c, "."+lower) {
+		if strings.HasSuffix(c, "."+lower) || strings.HasSuffix(c, "_"+lower) {
 			return c
 		}
 	}
@@ -84,4 +84,12 @@ func orList(names []string) string {
 		return strings.Join(names, "")
 	}
 	return strings.Join(names[:len(names)-1], ", ") + " or " + names[len(names)-1]
+}
+
+// article puts a or an before a noun.
+func article(noun string) string {
+	if strings.ContainsRune("aeiou", rune(noun[0])) {
+		return "an " + noun
+	}
+	return "a " + noun
 }

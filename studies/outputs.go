@@ -58,6 +58,7 @@ func Outputs() []Output {
 		{"pressure_min", "smallest working pressure", Pressure, "bar", func(p *p) *float64 { return &p.PressureMin }},
 		{"pressure_ratio", "largest over smallest working pressure", Number, "-", func(p *p) *float64 { return &p.PressureRatio }},
 		{"torque", "mean shaft torque", Torque, "N m", func(p *p) *float64 { return &p.Torque }},
+		{"forced_work", "work a cycle that the drive must put into the pistons", Energy, "J", func(p *p) *float64 { return &p.ForcedWork }},
 		{"expansion_temperature", "time-mean gas temperature in the expansion space", Temperature, "degC", func(p *p) *float64 { return &p.ExpansionTemperature }},
 		{"compression_temperature", "time-mean gas temperature in the compression space", Temperature, "degC", func(p *p) *float64 { return &p.CompressionTemperature }},
 		{"energy_residual", "heat in less shaft work, coolant heat and losses to the surroundings, over heat in", Number, "-", func(p *p) *float64 { return &p.EnergyResidual }},

@@ -122,7 +122,7 @@ func (r *reader) mayFail(part, inside, outside string) {
 				hint = "such designs fail"
 			}
 			r.fault(given.place, "engine."+path, &fault{MayFail,
-				fmt.Sprintf("reaches %s mm, the shortest tube has %s mm", FormatSI(high, Length, "mm", 4), FormatSI(tube, Length, "mm", 4)), hint})
+				fmt.Sprintf("reaches %s, the shortest tube has %s", shown(high, Length, "mm"), shown(tube, Length, "mm")), hint})
 		}
 	}
 }

@@ -22,6 +22,7 @@ const (
 	Angle
 	Power
 	Torque
+	Energy
 	Duration
 	Mass
 	MassFlow
@@ -34,7 +35,7 @@ const (
 // String is the name of the quantity in messages.
 func (q Quantity) String() string {
 	return [quantities]string{"plain number", "length", "area", "volume", "pressure", "temperature",
-		"temperature difference", "speed of rotation", "angle", "power", "torque", "time", "mass", "mass flow",
+		"temperature difference", "speed of rotation", "angle", "power", "torque", "energy", "time", "mass", "mass flow",
 		"heat flux", "film coefficient", "velocity"}[q]
 }
 
@@ -80,6 +81,8 @@ func units() []unit {
 		{"W", Power, 1, 1, 0},
 		{"kW", Power, 1e3, 1, 0},
 		{"N m", Torque, 1, 1, 0},
+		{"J", Energy, 1, 1, 0},
+		{"kJ", Energy, 1e3, 1, 0},
 		{"s", Duration, 1, 1, 0},
 		{"min", Duration, 60, 1, 0},
 		{"h", Duration, 3600, 1, 0},
@@ -164,7 +167,7 @@ func parseQuantity(text string, q Quantity) (float64, *fault) {
 	case u.quantity != q && q == TemperatureDifference:
 		return 0, &fault{UnitWrong, fmt.Sprintf("%q is the unit of a temperature reading, a temperature difference is wanted", rest), "write it in K"}
 	case u.quantity != q:
-		return 0, &fault{UnitWrong, fmt.Sprintf("%q is a unit of %s, a %s is wanted", rest, u.quantity, q), wanted(q)}
+		return 0, &fault{UnitWrong, fmt.Sprintf("%q is a unit of %s, %s is wanted", rest, u.quantity, article(q.String())), wanted(q)}
 	}
 	v := u.si(number)
 	if math.IsInf(v, 0) {
@@ -291,7 +294,7 @@ func splitNumber(text string) (number float64, rest string, f *fault) {
 
 // badSeparator finds a comma, an underscore or a space inside a number that ends at i so far.
 func badSeparator(s, rest string, i int) *fault {
-	if rest == "" {
+	if rest == "" || rest == "-" {
 		return nil
 	}
 	next := rest[0]

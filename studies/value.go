@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math"
 	"slices"
+	"strconv"
 )
 
 // value reads one value of a field: type, unit, physical range, usual range.
@@ -77,10 +78,10 @@ func (f *Field) defaultValue() float64 {
 }
 
 func (f *Field) withUnit(v float64) string {
-	if f.Unit == "-" {
+	if f.Kind == Choice {
 		return f.Format(v)
 	}
-	return f.Format(v) + " " + f.Unit
+	return shown(v, f.Quantity, f.Unit)
 }
 
 func outside(v float64, q Quantity, unitName string, r Range) *fault {
@@ -92,7 +93,7 @@ func unusual(f *Field, v float64) *fault {
 }
 
 func shown(v float64, q Quantity, unitName string) string {
-	s := FormatNumber(FromSI(v, q, unitName), 6)
+	s := short(FromSI(v, q, unitName))
 	if unitName == "-" {
 		return s
 	}
@@ -100,5 +101,14 @@ func shown(v float64, q Quantity, unitName string) string {
 }
 
 func span(r Range, q Quantity, unitName string) string {
-	return FormatNumber(FromSI(r.Low, q, unitName), 4) + " to " + shown(r.High, q, unitName)
+	return short(FromSI(r.Low, q, unitName)) + " to " + shown(r.High, q, unitName)
+}
+
+// short writes a number with at most six digits and no zeros at its end.
+func short(v float64) string {
+	rounded, err := strconv.ParseFloat(strconv.FormatFloat(v, 'g', 6, 64), 64)
+	if err != nil {
+		return FormatNumber(v, 6)
+	}
+	return plainNumber(rounded)
 }
