@@ -13,15 +13,15 @@ import (
 
 // TestReferences holds the bibliography together: every [Key] in a comment of the model has a line in
 // REFERENCES.md, and every line there is named by some comment. A key is a word of four or more letters and
-// digits that begins with a capital letter, so units in brackets and short Go names are none; comments of
-// the model therefore use no Go doc links of that form.
+// digits that begins with a capital letter (or, as vanLeer1979, holds one and a year), so units in brackets
+// and short Go names are none; comments of the model therefore use no Go doc links of that form.
 func TestReferences(t *testing.T) {
 	text, err := os.ReadFile("REFERENCES.md")
 	if err != nil {
 		t.Fatal(err)
 	}
 	// - [Key] Authors, title, where, year.
-	line := regexp.MustCompile(`^- \[([A-Z][A-Za-z0-9]{2,})\] [^,]+, .+, .+, [^,]*([0-9]{4}|undated)\.$`)
+	line := regexp.MustCompile(`^- \[([A-Za-z][A-Za-z0-9]{2,})\] [^,]+, .+, .+, [^,]*([0-9]{4}|undated)\.$`)
 	listed := map[string]bool{}
 	last := ""
 	for _, l := range strings.Split(string(text), "\n") {
@@ -44,7 +44,7 @@ func TestReferences(t *testing.T) {
 		listed[m[1]] = true
 	}
 
-	cite := regexp.MustCompile(`\[([A-Z][A-Za-z0-9]{2,})\]`)
+	cite := regexp.MustCompile(`\[([A-Z][A-Za-z0-9]{2,}|[a-z]+[A-Z][a-z]+[0-9]{4})\]`)
 	source := regexp.MustCompile(`Source: \[([^\]]*)\]`)
 	used := map[string]bool{}
 	files := 0
