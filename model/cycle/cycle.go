@@ -1,0 +1,171 @@
+package cycle
+
+// film sets the film conductances from the predicted flows, with the matrix temperature of the
+// stage eliminated:
+//
+//	Tw = Tw* + a (-Q)/C,  Q = UA (Tw - T)   gives   Q = UAe (Tw* - T),  UAe = UA C/(C + a UA).
+func (s *Solver) film(a float64) {
+	last := s.n - 1
+	for i := range s.n {
+		c := &s.path.Cells[i]
+		var flow float64
+		switch i {
+		case 0:
+			flow = s.flow[0]
+		case last:
+			flow = s.flow[last-1]
+		default:
+			flow = 0.5 * (s.flow[i-1] + s.flow[i])
+		}
+		if flow < 0 {
+			flow = -flow
+		}
+		ua := c.FixedFilm
+		switch s.kind[i] {
+		case Tube:
+			if ua == 0 {
+				ua = s.filmScale[i] * s.fast.TubeNusselt(flow*s.reScale[i], s.prandtl[i], c.Slim)
+			}
+		case Matrix:
+			if ua == 0 {
+				ua = s.filmScale[i] * s.fast.MatrixNusselt(&s.path.Porous, flow*s.reScale[i], s.prandtl[i])
+			}
+			s.ua[i] = ua
+			if !s.path.FixedRun {
+				ua *= c.Capacity / (c.Capacity + a*ua)
+			}
+			s.uae[i] = ua
+			s.wall0[i] = s.metal0[i]
+			continue
+		}
+		s.ua[i] = ua
+		s.uae[i] = ua
+		s.wall0[i] = s.wall[i]
+	}
+}
+
+// run takes the state through one cycle and fills s.sums and s.Trace. It reports false when the
+// solution left the physical range.
+func (s *Solver) run() bool {
+	move := s.move
+	dt := s.path.Period / float64(move.Steps)
+	a := Gamma * dt
+	b := (1 - Gamma) * dt
+	s.sums = sums{}
+	s.wallStart = s.wall
+	for i := range s.n {
+		s.sums.wallMax[i], s.sums.wallMin[i] = s.wall[i], s.wall[i]
+	}
+	for n := range move.Steps {
+		k := 2 * n
+		// First stage, at (n + gamma) dt.
+		for i := range s.n {
+			s.mass0[i], s.energy0[i] = s.mass[i], s.energy[i]
+			if s.kind[i] == Matrix {
+				s.metal0[i] = s.wall[i] + a*s.metalDrift[i]
+			}
+		}
+		if !s.newtonSteps(a, k) {
+			return false
+		}
+		s.rates(a, b, k)
+		// Second stage, at (n + 1) dt; it starts from the first stage's rates.
+		for i := range s.n {
+			s.mass0[i] = s.mass[i] + b*s.massRate[i]
+			s.energy0[i] = s.energy[i] + b*s.energyRate[i]
+			if s.kind[i] == Matrix {
+				s.metal0[i] = s.wall[i] + b*s.metalRate[i] + a*s.metalDrift[i]
+			}
+		}
+		if !s.newtonSteps(a, k+1) {
+			return false
+		}
+		if n == move.Steps-1 && !s.settle(a, k+1) {
+			return false
+		}
+		s.rates(a, a, k+1)
+		for i := range s.n {
+			s.mass[i] = s.mass0[i] + a*s.massRate[i]
+			s.energy[i] = s.energy0[i] + a*s.energyRate[i]
+			if s.kind[i] == Matrix {
+				w := s.metal0[i] + a*(s.metalRate[i]-s.metalDrift[i])
+				s.wall[i] = w
+				s.sums.metal[i] += dt * w
+				s.sums.wallMax[i] = max(s.sums.wallMax[i], w)
+				s.sums.wallMin[i] = min(s.sums.wallMin[i], w)
+			}
+		}
+	}
+	return true
+}
+
+// settle repeats the Newton step at the end of a cycle until temperatures and pressure agree with the
+// masses and energies carried there: the next cycle starts from the former alone.
+func (s *Solver) settle(a float64, k int) bool {
+	for range 2 {
+		if !s.stage(a, s.move.Ve[k], s.move.DVe[k], s.move.Vc[k], s.move.DVc[k]) {
+			return false
+		}
+	}
+	return true
+}
+
+func (s *Solver) newtonSteps(a float64, k int) bool {
+	s.film(a)
+	for range s.newton {
+		if !s.stage(a, s.move.Ve[k], s.move.DVe[k], s.move.Vc[k], s.move.DVc[k]) {
+			return false
+		}
+	}
+	return true
+}
+
+// rates works out the rates of mass, energy and matrix temperature at the stage just solved, adds
+// them with the weight w [s] to the integrals of the cycle and keeps the trace.
+func (s *Solver) rates(a, w float64, k int) {
+	path := s.path
+	last := s.n - 1
+	p := s.p
+	var flowIn, energyIn float64
+	for i := range s.n {
+		var flowOut, energyOut float64
+		if i < last {
+			flowOut = s.flow[i]
+			rise := s.wLeft[i]*s.dT[i] + s.wRight[i]*s.dT[i+1]
+			energyOut = flowOut * (s.hFace[i] + s.cpFace[i]*rise)
+			s.sums.enthalpy[i] += w * energyOut
+			if flowOut >= 0 {
+				s.sums.flowAbs[i] += w * flowOut
+			} else {
+				s.sums.flowAbs[i] -= w * flowOut
+			}
+		}
+		q := s.uae[i] * (s.wall0[i] - s.t[i])
+		s.massRate[i] = flowIn - flowOut
+		s.energyRate[i] = energyIn - energyOut + q
+		s.sums.heat[i] += w * q
+		s.sums.temperature[i] += w * s.t[i]
+		s.sums.film[i] += w * s.ua[i]
+		if s.kind[i] == Matrix {
+			s.metalRate[i] = s.metalDrift[i]
+			if !path.FixedRun {
+				s.metalRate[i] -= q / path.Cells[i].Capacity
+			}
+			c := s.cp[i] * 0.5 * (flowIn + flowOut)
+			s.sums.blow[i] += w * c * c / s.ua[i]
+			if q < 0 {
+				s.sums.heatIn[i] -= w * q
+			}
+		}
+		flowIn, energyIn = flowOut, energyOut
+	}
+	we, wc := p*s.move.DVe[k], p*s.move.DVc[k]
+	s.energyRate[0] -= we
+	s.energyRate[last] -= wc
+	s.sums.work[0] += w * we
+	s.sums.work[1] += w * wc
+	s.sums.pressure += w * p
+	s.Trace.Pressure[k] = p
+	copy(s.Trace.Flow[k][:s.n], s.flow[:s.n])
+	copy(s.Trace.Temp[k][:s.n], s.t[:s.n])
+}

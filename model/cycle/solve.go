@@ -1,0 +1,332 @@
+package cycle
+
+import "math"
+
+// Tolerances of the periodic state. Each is a share, so that they mean the same for every engine.
+const (
+	tolBalance  = 2e-4 // heat from walls less work, over heat into the gas at the heater
+	tolProfile  = 5e-4 // largest difference of mean enthalpy flow between two sections of the matrix, over that heat
+	tolWork     = 2e-4 // change of work between cycles, over that heat
+	tolCoarse   = 2e-2 // balance and profile at which the coarse grid has done its part
+	tolPressure = 2e-4 // mean pressure over the one asked for, less one
+	tolWall     = 0.1  // change of a wall temperature between cycles [K]
+)
+
+// Result is the periodic state, in joules a cycle and kelvin.
+type Result struct {
+	Cycles    int
+	Converged bool
+	Diverged  bool
+
+	PressureMean, PressureMax, PressureMin float64           // [Pa]
+	Mass                                   float64           // gas in the path [kg]
+	WorkExpansion, WorkCompression         float64           // integral p dV [J]
+	Heat                                   [MaxCells]float64 // from wall into gas [J]
+	Temperature                            [MaxCells]float64 // time-mean gas temperature [K]
+	Wall                                   [MaxCells]float64 // wall or time-mean matrix temperature [K]
+	Swing                                  float64           // largest swing of a matrix cell over the cycle [K]
+	FilmMean                               [MaxCells]float64 // time-mean UA [W/K]
+	FlowMean                               [MaxCells]float64 // time-mean |M| over face i|i+1 [kg/s]
+	Enthalpy                               [MaxCells]float64 // net enthalpy over face i|i+1 [J]
+	Conduction                             [MaxCells]float64 // axial conduction between matrix cells i and i+1 [J]
+	HeatIntoMatrix                         float64           // heat stored by the matrix over a cycle [J]
+	Outer                                  float64           // temperature behind the heater walls [K]
+	Balance                                float64           // (heat from tube walls - work) / heater heat [-]
+	Profile                                float64           // spread of the mean energy flow through the matrix / heater heat [-]
+}
+
+// Settings of the iteration.
+type Settings struct {
+	MaxCycles int  // give up after this many
+	Newton    int  // Newton steps a stage
+	Depth     int  // of Anderson's method, 0 = plain repetition
+	FineOnly  bool // leave out the coarse grid
+}
+
+// DefaultSettings are those of production runs.
+func DefaultSettings() Settings { return Settings{MaxCycles: 60, Newton: 1, Depth: 6} }
+
+// Solve finds the periodic state of the path and fills dst. dst.Converged says whether it was
+// reached; the rest of dst holds the last cycle all the same.
+//
+// A solution that leaves the physical range, or does not settle, is tried once more from the start with
+// more Newton steps and cycles, on the fine grid alone and with less acceleration.
+func (s *Solver) Solve(dst *Result, path *Path, set Settings) {
+	s.path = path
+	s.attempt(dst, path, set)
+	if dst.Converged {
+		return
+	}
+	spent := dst.Cycles
+	set.Newton, set.Depth, set.FineOnly, set.MaxCycles = set.Newton+2, min(set.Depth, 4), true, 2*set.MaxCycles
+	s.attempt(dst, path, set)
+	dst.Cycles += spent
+}
+
+func (s *Solver) attempt(dst *Result, path *Path, set Settings) {
+	s.move = &path.Fine
+	if path.Coarse.Steps > 0 && !set.FineOnly {
+		s.move = &path.Coarse
+	}
+	s.begin(set)
+	*dst = Result{}
+	lastWork := math.Inf(1)
+	for cycle := 1; cycle <= set.MaxCycles; cycle++ {
+		s.transport(cycle == 1)
+		s.conserved()
+		s.mixing.push(s)
+		s.newton = set.Newton
+		if cycle == 1 { // from rest: the first prediction is poor
+			s.newton += 2
+		}
+		if !s.run() {
+			dst.Cycles, dst.Diverged = cycle, true
+			return
+		}
+		work := s.sums.work[0] + s.sums.work[1]
+		hot := s.heatOf(PartHeater)
+		scale := math.Abs(hot) + 1e-9*path.Mean*path.Fine.Ve0
+		balance := (s.wallHeat() - work) / scale
+		profile := s.profileSpread() / scale
+		mean := s.sums.pressure / path.Period
+
+		moved := s.moveWalls()
+		s.moveMatrix()
+		s.p *= path.Mean / mean
+		if s.move == &path.Coarse {
+			// Go over to the fine grid once its own error outweighs what is left.
+			if (math.Abs(balance) < tolCoarse && profile < tolCoarse && moved < 10*tolWall) || cycle >= set.MaxCycles/3 {
+				s.move = &path.Fine
+				s.mixing.restart()
+			} else {
+				s.mixing.mix(s)
+			}
+			lastWork = work
+			continue
+		}
+		done := math.Abs(balance) < tolBalance && profile < tolProfile &&
+			math.Abs(work-lastWork) < tolWork*scale &&
+			math.Abs(mean/path.Mean-1) < tolPressure && moved < tolWall
+		lastWork = work
+		if done || cycle == set.MaxCycles {
+			dst.Cycles, dst.Converged, dst.Balance, dst.Profile = cycle, done, balance, profile
+			s.collect(dst)
+			return
+		}
+		s.mixing.mix(s)
+	}
+}
+
+// wallHeat is the heat from all walls that neither store nor release heat over a cycle. A matrix
+// held at given temperatures is such a wall.
+func (s *Solver) wallHeat() float64 {
+	sum := 0.0
+	for i := range s.n {
+		if s.kind[i] != Matrix || s.path.FixedRun {
+			sum += s.sums.heat[i]
+		}
+	}
+	return sum
+}
+
+func (s *Solver) heatOf(part Part) float64 {
+	sum := 0.0
+	for i := range s.n {
+		if s.part[i] == part && s.kind[i] != Matrix {
+			sum += s.sums.heat[i]
+		}
+	}
+	return sum
+}
+
+// begin sets up the arrays and a first state: isothermal at the walls.
+func (s *Solver) begin(set Settings) {
+	path := s.path
+	s.gas = path.Gas
+	s.n = path.N
+	s.lift = 0
+	n := s.n
+	hot, cold := 0.0, 0.0
+	for i := range n {
+		c := &path.Cells[i]
+		s.kind[i], s.part[i] = c.Kind, c.Part
+		s.volume[i] = c.Volume
+		s.wall[i] = c.Wall
+		s.t[i] = c.Wall
+		s.flow[i] = 0
+		s.dT[i] = 0
+		s.metalDrift[i] = 0
+		if c.Kind == Tube {
+			if hot == 0 {
+				hot = c.Wall
+			}
+			cold = c.Wall
+		}
+		s.faceKind[i] = faceUpwind
+		if c.Kind == Matrix && i+1 < n && path.Cells[i+1].Kind == Matrix {
+			s.faceKind[i] = faceMatrix
+			s.wLeft[i], s.wRight[i] = 0.5, 0.5
+		}
+	}
+	if path.Cells[0].FixedFilm == 0 {
+		s.t[0] = hot
+		s.t[n-1] = cold
+	}
+	for i := 1; i < n-1; i++ { // passive cells take the temperature of the part they end
+		if s.kind[i] != Passive {
+			continue
+		}
+		switch {
+		case s.kind[i+1] == Tube:
+			s.t[i] = path.Cells[i+1].Wall
+		default:
+			s.t[i] = s.t[i-1]
+		}
+	}
+	fixed := 0.0
+	for i := 1; i < n-1; i++ {
+		fixed += s.volume[i] / s.t[i]
+	}
+	mean := 0.0
+	for k := range s.move.Steps {
+		mean += 1 / (s.move.Ve[2*k+1]/s.t[0] + s.move.Vc[2*k+1]/s.t[n-1] + fixed)
+	}
+	mean /= float64(s.move.Steps)
+	s.p = path.Mean / mean / (path.Fine.Ve0/s.t[0] + path.Fine.Vc0/s.t[n-1] + fixed)
+	s.mixing.reset(set.Depth)
+}
+
+// conserved sets masses and energies from temperatures and pressure.
+func (s *Solver) conserved() {
+	s.volume[0], s.volume[s.n-1] = s.path.Fine.Ve0, s.path.Fine.Vc0
+	s.properties(s.p)
+	for i := range s.n {
+		s.mass[i] = s.m[i]
+		s.energy[i] = s.m[i]*s.h[i] - s.p*s.volume[i]
+	}
+}
+
+// transport sets the film factors at the mean temperature of each cell over the last cycle; gas
+// viscosity and conductivity follow the temperature swing of a cell only in the mean.
+func (s *Solver) transport(first bool) {
+	path := s.path
+	for i := range s.n {
+		c := &path.Cells[i]
+		if s.kind[i] != Tube && s.kind[i] != Matrix {
+			continue
+		}
+		t := s.t[i]
+		if !first {
+			t = s.sums.temperature[i] / path.Period
+		}
+		s.gas.At(&s.state, t, path.Mean)
+		mu, k := s.gas.Transport(t, 1/s.state.V)
+		s.viscosity[i] = mu
+		if c.FixedFilm > 0 {
+			continue
+		}
+		s.filmScale[i] = k * c.Film / c.Dh
+		s.reScale[i] = c.Dh / (c.Area * mu)
+		s.prandtl[i] = s.state.Cp * mu / k
+		if s.kind[i] == Matrix && i+1 < s.n && s.kind[i+1] == Matrix {
+			re := 0.0
+			if !first {
+				re = s.sums.flowAbs[i] / path.Period * s.reScale[i]
+			}
+			s.conduct[i] = c.Conduct + k*c.GasCross*s.fast.MatrixDispersion(&path.Porous, re, s.prandtl[i])
+		}
+	}
+}
+
+// moveWalls moves the tube walls to what the mean heat through their resistance asks for, and the
+// temperature behind the heater walls towards a mean gas temperature asked for. It returns the
+// largest move [K].
+//
+// With Q the mean heat into the gas, R the resistance and UA the mean film, Newton's step on
+// Tw = To - R Q(Tw) with dQ/dTw taken as UA: it is too cautious, never too bold.
+func (s *Solver) moveWalls() float64 {
+	path := s.path
+	shift := 0.0
+	if path.Target > 0 {
+		sum, weight := 0.0, 0.0
+		for i := range s.n {
+			if s.kind[i] == Tube && s.part[i] == PartHeater {
+				sum += path.Cells[i].Volume * s.sums.temperature[i] / path.Period
+				weight += path.Cells[i].Volume
+			}
+		}
+		shift = path.Target - sum/weight
+	}
+	s.lift += shift
+	largest := math.Abs(shift)
+	for i := range s.n {
+		c := &path.Cells[i]
+		if s.kind[i] != Tube {
+			continue
+		}
+		outer := c.Outer
+		if s.part[i] == PartHeater {
+			outer += s.lift
+		}
+		q := s.sums.heat[i] / path.Period
+		ua := s.sums.film[i] / path.Period
+		tw := s.wall[i]
+		next := (outer - c.Resistance*(q-ua*tw)) / (1 + c.Resistance*ua)
+		largest = max(largest, math.Abs(next-tw))
+		s.wall[i] = next
+	}
+	return largest
+}
+
+// collect fills the result from the last cycle.
+func (s *Solver) collect(dst *Result) {
+	path := s.path
+	n := s.n
+	dst.PressureMean = s.sums.pressure / path.Period
+	dst.PressureMax, dst.PressureMin = s.pressureRange()
+	dst.WorkExpansion, dst.WorkCompression = s.sums.work[0], s.sums.work[1]
+	for i := range n {
+		dst.Mass += s.mass[i]
+		dst.Heat[i] = s.sums.heat[i]
+		dst.Temperature[i] = s.sums.temperature[i] / path.Period
+		dst.Wall[i] = s.wall[i]
+		dst.FilmMean[i] = s.sums.film[i] / path.Period
+		dst.FlowMean[i] = s.sums.flowAbs[i] / path.Period
+		dst.Enthalpy[i] = s.sums.enthalpy[i]
+		if s.kind[i] == Matrix {
+			dst.HeatIntoMatrix += s.sums.heatIn[i]
+			dst.Swing = max(dst.Swing, s.sums.wallMax[i]-s.sums.wallMin[i])
+			if s.faceKind[i] == faceMatrix {
+				dst.Conduction[i] = s.axialFlow[i] * path.Period
+			}
+		}
+		if s.kind[i] == Tube && s.part[i] == PartHeater {
+			dst.Outer = path.Cells[i].Outer + s.lift
+		}
+	}
+}
+
+// pressureRange finds the extremes of the pressure by a parabola through the three values round
+// the largest and the smallest at full steps.
+func (s *Solver) pressureRange() (high, low float64) {
+	steps := s.move.Steps
+	at := func(n int) float64 { return s.Trace.Pressure[2*((n+steps)%steps)+1] }
+	hi, lo := 0, 0
+	for n := range steps {
+		if at(n) > at(hi) {
+			hi = n
+		}
+		if at(n) < at(lo) {
+			lo = n
+		}
+	}
+	top := func(n int) float64 {
+		l, m, r := at(n-1), at(n), at(n+1)
+		den := l - 2*m + r
+		if den == 0 {
+			return m
+		}
+		return m - (r-l)*(r-l)/(8*den)
+	}
+	return top(hi), top(lo)
+}

@@ -1,0 +1,167 @@
+package model
+
+import (
+	"hotfront/model/drive"
+	"hotfront/model/gas"
+	"hotfront/model/metal"
+)
+
+// Layout is the arrangement of pistons and cylinders.
+type Layout uint8
+
+const (
+	Alpha Layout = iota // two pistons in two cylinders
+	Beta                // displacer and piston in one cylinder
+	Gamma               // displacer and piston in cylinders of their own
+)
+
+// MatrixKind is the kind of porous matrix in the regenerator.
+type MatrixKind uint8
+
+const (
+	WovenScreen MatrixKind = iota
+	RandomFibre
+)
+
+// HeatKind says how the hot end is given.
+type HeatKind uint8
+
+const (
+	HeatTubeWall HeatKind = iota // mean outer tube-wall temperature
+	HeatTubeGas                  // mean gas temperature in the heated tubes
+)
+
+// Engine is one design: the input of the model. Everything is SI. Zero values are not defaults;
+// defaults live in the table of fields of package studies.
+type Engine struct {
+	Layout         Layout
+	Gas            gas.Kind
+	ChargePressure float64 // time mean of the working pressure over a cycle [Pa]
+	Speed          float64 // revolutions per second [Hz]
+
+	Drive Drive
+
+	Displacer         Reciprocator // beta, gamma
+	Piston            Reciprocator // beta, gamma; in a beta its bore is the displacer's cylinder bore
+	ExpansionPiston   Reciprocator // alpha
+	CompressionPiston Reciprocator // alpha
+
+	Cylinder Cylinder
+
+	ExpansionClearance   float64 // volume of the expansion space at its smallest [m3]
+	CompressionClearance float64 // volume of the compression space at its smallest [m3]
+	BufferVolume         float64 // mean volume of the buffer space behind the piston [m3]; 0 = large, pressure constant
+
+	Heater      Heater
+	Regenerator Regenerator
+	Cooler      Cooler
+
+	ExpansionDuct   Duct // expansion space to heater
+	HotDuct         Duct // heater to regenerator
+	ColdDuct        Duct // regenerator to cooler
+	CompressionDuct Duct // cooler to compression space
+
+	Heat    Heat
+	Coolant Coolant
+}
+
+// Drive is the mechanism that moves the pistons.
+type Drive struct {
+	Kind         drive.Kind
+	PhaseAngle   float64 // expansion volume (displacer) leads the compression volume (piston) by this [rad]; sinusoidal, slider-crank
+	RodLength    float64 // connecting rod [m]; slider-crank, rhombic
+	CrankRadius  float64 // [m]; rhombic
+	Eccentricity float64 // distance of the crank axis from the cylinder axis [m]; rhombic
+}
+
+// Reciprocator is a displacer or a piston.
+type Reciprocator struct {
+	Bore       float64 // of its cylinder [m]
+	Stroke     float64 // [m]; with a rhombic drive it follows from the drive and is not given
+	Rod        float64 // rod through the compression space [m]; displacer only, 0 = none
+	Length     float64 // of the hot body (displacer, dome of an expansion piston) from hot face to seal [m]
+	Gap        float64 // radial gap between hot body and cylinder wall [m]
+	Wall       float64 // wall thickness of the hollow hot body [m]
+	SealGap    float64 // radial gap of the seal that stands for its leakage [m]; 0 = tight
+	SealLength float64 // length of that seal [m]
+}
+
+// Cylinder is the wall round the hot body, from hot end to cold end.
+type Cylinder struct {
+	Wall  float64 // thickness [m]
+	Alloy metal.Alloy
+}
+
+// Heater is a bundle of equal tubes in parallel.
+type Heater struct {
+	TubeCount    int
+	TubeBore     float64 // inner diameter [m]
+	TubeWall     float64 // wall thickness [m]
+	TubeLength   float64 // from header to header [m]
+	HeatedLength float64 // part of the length that takes up heat [m]
+	EndLoss      float64 // sum of the loss coefficients of entry, exit and bends, on the dynamic pressure in the tube [-]
+	Alloy        metal.Alloy
+	RingDiameter float64 // circle on which the tubes stand [m]; 0 = not given, fit not checked
+	FluxPeaking  float64 // largest local heat flux over the mean [-], >= 1
+	DesignLife   float64 // [s]
+	StressFactor float64 // creep rupture stress at the design life over allowable stress [-], >= 1
+}
+
+// Regenerator is one or several equal canisters in parallel.
+type Regenerator struct {
+	Kind          MatrixKind
+	Count         int
+	Diameter      float64     // outer diameter of the matrix in one canister [m]
+	InnerDiameter float64     // 0 for a full cylinder, else an annulus [m]
+	Length        float64     // [m]
+	WireDiameter  float64     // [m]
+	Porosity      float64     // [-]
+	Alloy         metal.Alloy // of the matrix
+	CanisterWall  float64     // wall thickness of the canister [m]
+	CanisterAlloy metal.Alloy
+}
+
+// Cooler is a bundle of equal tubes in parallel, coolant outside.
+type Cooler struct {
+	TubeCount     int
+	TubeBore      float64 // [m]
+	TubeWall      float64 // [m]
+	TubeLength    float64 // [m]
+	CooledLength  float64 // part of the length that gives off heat [m]
+	EndLoss       float64 // as in Heater [-]
+	Alloy         metal.Alloy
+	ShellDiameter float64 // inner diameter of the shell round the bundle, all shells of the machine as one [m]; 0 = not given, fit not checked
+}
+
+// Duct is the gas path between two parts. A volume of 0 means none.
+type Duct struct {
+	Volume float64 // [m3]
+	Area   float64 // flow area [m2]; 0 with Loss 0 = no flow loss
+	Loss   float64 // loss coefficient on the dynamic pressure in Area [-]
+}
+
+// Heat says how the hot end is given.
+type Heat struct {
+	Kind        HeatKind
+	Temperature float64 // [K]
+}
+
+// Coolant cools the outside of the cooler tubes (water).
+type Coolant struct {
+	Inlet float64 // temperature [K]
+	Flow  float64 // [kg/s]
+	Film  float64 // outer film coefficient [W/(m2 K)]
+}
+
+// Corrections are the factors by which the model is fitted to measured engines.
+type Corrections struct {
+	FlowFriction  float64 // multiplies every pressure difference by friction [-], >= 0
+	CycleWork     float64 // share of the p-V work that survives what one dimension leaves out [-], 0..1; the rest goes to the coolant
+	Effectiveness float64 // of the drive, E of Senft's theorem [-], 0..1
+	SealFriction  float64 // friction mean effective pressure of seals and bearings on the swept volume of the piston [Pa]
+}
+
+// NoCorrections is the model as it stands: factors 1, no drive friction.
+func NoCorrections() Corrections {
+	return Corrections{FlowFriction: 1, CycleWork: 1, Effectiveness: 1, SealFriction: 0}
+}

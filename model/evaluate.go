@@ -1,0 +1,83 @@
+package model
+
+import (
+	"math"
+
+	"hotfront/model/cycle"
+	"hotfront/model/gas"
+)
+
+// Evaluate works out the performance of a design: the one entry to the model. It fills dst and
+// allocates nothing; w holds all its memory and, afterwards, the history of the cycle.
+//
+// A design that cannot be built, or whose periodic state is not found, has dst.Cause set and every
+// number zero. Use beyond the stated range of a law shows in dst.Warnings.
+func Evaluate(dst *Performance, e *Engine, c *Corrections, w *Workspace) {
+	*dst = Performance{}
+	dst.Cause = w.evaluate(dst, e, c)
+	if dst.Cause == None && !dst.finite() {
+		dst.Cause = Diverged
+	}
+	if dst.Cause != None {
+		cause, cycles := dst.Cause, dst.Cycles
+		*dst = Performance{Cause: cause, Cycles: cycles, Steps: w.Grid.Steps}
+	}
+}
+
+func (w *Workspace) evaluate(dst *Performance, e *Engine, c *Corrections) Cause {
+	dst.Steps = w.Grid.Steps
+	if cause := w.geometry.set(e); cause != None {
+		return cause
+	}
+	if e.Heat.Temperature <= e.Coolant.Inlet+1 {
+		return ColderThanCoolant
+	}
+	if !c.valid() {
+		return BadInput
+	}
+	w.gas = gas.New(e.Gas)
+	if cause := w.setMotion(e); cause != None {
+		return cause
+	}
+	w.setPath(e)
+	w.solver.Solve(&w.Cycle, &w.Path, w.Settings)
+	dst.Cycles = w.Cycle.Cycles
+	if w.Cycle.Diverged {
+		return Diverged
+	}
+	if !w.Cycle.Converged {
+		return NoConvergence
+	}
+	w.setFriction(e)
+	w.setPerformance(dst, e, c)
+	if dst.ForcedWork < 0 {
+		return BufferTooSmall
+	}
+	if dst.HeatIn < leastHeat*w.heat(cycle.PartHeater)*e.Speed {
+		return NoHeat
+	}
+	w.setMetal(dst, e)
+	w.setWarnings(dst, e)
+	return None
+}
+
+// leastHeat is the share of the heat given to the gas in the heater that must come from outside. Below it
+// flow friction heats the engine, not its heat source, and efficiency has no meaning.
+const leastHeat = 0.25
+
+func (c *Corrections) valid() bool {
+	return c.FlowFriction >= 0 && !math.IsInf(c.FlowFriction, 1) && c.CycleWork >= 0 && c.CycleWork <= 1 &&
+		c.Effectiveness > 0 && c.Effectiveness <= 1 && c.SealFriction >= 0 && !math.IsInf(c.SealFriction, 1)
+}
+
+// finite tells whether the numbers that everything else follows from are finite.
+func (p *Performance) finite() bool {
+	sum := p.BrakePower + p.HeatIn + p.CoolantHeat + p.PressureMax + p.HeaterStressUtilisation +
+		p.HeaterMetalTemperature + p.Mach + p.Losses.sum() + p.HotMetalMass
+	return !math.IsNaN(sum) && !math.IsInf(sum, 0)
+}
+
+func (l *Losses) sum() float64 {
+	return l.FlowFriction + l.CycleWork + l.Leakage + l.Drive + l.SealFriction + l.Reheat + l.MatrixConduction +
+		l.CanisterConduction + l.CylinderConduction + l.DisplacerConduction + l.Shuttle + l.AppendixGap + l.DisplacerLeakage
+}

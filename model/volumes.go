@@ -1,0 +1,81 @@
+package model
+
+import (
+	"math"
+
+	"hotfront/model/cycle"
+	"hotfront/model/drive"
+)
+
+// setMotion works out the motion of the bodies and fills the volumes of both spaces at the stage
+// times of the solver.
+func (w *Workspace) setMotion(e *Engine) Cause {
+	g := &w.geometry
+	m := &w.motion
+	m.mechanism = drive.Mechanism{
+		Kind: e.Drive.Kind, Phase: e.Drive.PhaseAngle, Rod: e.Drive.RodLength, Radius: e.Drive.CrankRadius,
+		Eccentricity: e.Drive.Eccentricity, Stroke1: g.hot.Stroke, Stroke2: g.cold.Stroke,
+	}
+	switch m.mechanism.Check() {
+	case drive.None:
+	case drive.RodTooShort:
+		return RodTooShort
+	case drive.CranksCollide:
+		return CranksCollide
+	default:
+		return BadInput
+	}
+	m.extremes = m.mechanism.Extremes()
+	g.hotStroke, g.coldStroke = m.extremes.Stroke1(), m.extremes.Stroke2()
+	g.sweptExpansion = g.hotArea * g.hotStroke
+	g.sweptPiston = g.coldArea * g.coldStroke
+	if e.Layout == Alpha {
+		g.sweptPiston += g.sweptExpansion
+	}
+
+	w.Path.Period = 1 / e.Speed
+	w.fillMotion(&w.Path.Fine, e, w.Grid.Steps)
+	w.fillMotion(&w.Path.Coarse, e, w.Grid.CoarseSteps)
+	return None
+}
+
+// fillMotion fills the volumes over a cycle of the given number of steps.
+func (w *Workspace) fillMotion(m *cycle.Motion, e *Engine, steps int) {
+	m.Steps = steps
+	if steps == 0 {
+		return
+	}
+	omega := 2 * math.Pi * e.Speed
+	dth := 2 * math.Pi / float64(steps)
+	var at drive.Motion
+	for k := range 2 * steps {
+		c := float64(k>>1) + 1
+		if k&1 == 0 {
+			c += cycle.Gamma - 1
+		}
+		w.motion.mechanism.At(&at, c*dth)
+		var dve, dvc float64
+		m.Ve[k], dve, m.Vc[k], dvc = w.volumes(e, &at)
+		m.DVe[k], m.DVc[k] = dve*omega, dvc*omega
+	}
+	w.motion.mechanism.At(&at, 0)
+	m.Ve0, _, m.Vc0, _ = w.volumes(e, &at)
+}
+
+// volumes gives both spaces and their rates by the crank angle.
+func (w *Workspace) volumes(e *Engine, at *drive.Motion) (ve, dve, vc, dvc float64) {
+	g, x := &w.geometry, &w.motion.extremes
+	ve = e.ExpansionClearance + g.hotArea*(x.Top1-at.Y1)
+	dve = -g.hotArea * at.V1
+	under := g.hotArea - g.hotRodArea // cold side of a displacer
+	switch e.Layout {
+	case Alpha:
+		vc, dvc = g.coldArea*(x.Top2-at.Y2), -g.coldArea*at.V2
+	case Beta:
+		vc, dvc = under*(at.Y1-at.Y2-x.MinGap), under*(at.V1-at.V2)
+	default:
+		vc = under*(at.Y1-x.Bottom1) + g.coldArea*(x.Top2-at.Y2)
+		dvc = under*at.V1 - g.coldArea*at.V2
+	}
+	return ve, dve, vc + e.CompressionClearance, dvc
+}
