@@ -12,6 +12,10 @@ import (
 
 const badFolder = "../testdata/bad"
 
+func readBad(code Code) ([]byte, error) {
+	return os.ReadFile(filepath.Join(badFolder, string(code)+".yaml"))
+}
+
 // setsOf reads the lines "# --set path=value" at the head of a bad study.
 func setsOf(data []byte) []string {
 	var sets []string
@@ -31,7 +35,7 @@ func TestBadFiles(t *testing.T) {
 		if code == FileTooBig {
 			continue // made in TestHugeFiles: a megabyte of nothing has no place in the tree
 		}
-		data, err := os.ReadFile(filepath.Join(badFolder, string(code)+".yaml"))
+		data, err := readBad(code)
 		if err != nil {
 			t.Error(err)
 			continue

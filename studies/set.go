@@ -12,6 +12,9 @@ func (r *reader) overrides(sets []string) {
 		path, text, ok := strings.Cut(set, "=")
 		path, text = strings.TrimSpace(path), strings.TrimSpace(text)
 		p := place{set: clip(set)}
+		if set == "" {
+			p.set = `""`
+		}
 		s := scalar{text: text, place: p}
 		name, isFactor := strings.CutPrefix(path, "corrections.")
 		f, isInput := FieldNamed(r.fields, path)
