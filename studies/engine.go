@@ -41,17 +41,28 @@ func (r *reader) engineBlock(n *yaml.Node, prefix string) {
 			r.bad["heat.tube_wall"] = true
 			r.fault(e.where, "engine."+path, &fault{NotAvailable, e.key + " is not in this version", "give tube_wall or tube_gas"})
 		default:
-			r.unknownKey(e, strings.TrimSuffix("engine."+prefix, "."), childKeys(r.fields, prefix))
+			r.unknownField(e, prefix)
 		}
+	}
+}
+
+// unknownField reports a key of the engine that is none, with the nearest of its block or, when
+// there is none, of the whole engine.
+func (r *reader) unknownField(e entry, prefix string) {
+	block := strings.TrimSuffix("engine."+prefix, ".")
+	if children := childKeys(r.fields, prefix); r.suggest(e.key, children) != "" {
+		r.unknownKey(e, block, children)
+	} else if hint := r.suggest(e.key, fieldPaths(r.fields)); hint != "" {
+		r.fault(e.where, join(block, e.key), &fault{KeyUnknown, fmt.Sprintf("unknown key %q", clip(e.key)), hint})
+	} else {
+		r.unknownKey(e, block, children)
 	}
 }
 
 // twice reports a path written both as a block and with a point; scan found the plain case.
 func (r *reader) twice(e entry, path string, first scalar) {
-	for _, i := range r.issues {
-		if i.Code == KeyTwice && i.Line == e.where.line && i.Column == e.where.column {
-			return
-		}
+	if r.repeated[e.where] {
+		return
 	}
 	r.fault(e.where, "engine."+path, &fault{KeyTwice, "given twice", fmt.Sprintf("it is already on line %d", first.line)})
 }
@@ -225,6 +236,7 @@ func (r *reader) lengths(e *model.Engine) {
 			return
 		}
 		if length > tube*(1+1e-12) || length <= 0 {
+			r.bad[part+"."+long] = true
 			r.fault(s.place, "engine."+part+"."+long, &fault{Contradiction,
 				fmt.Sprintf("does not go with a tube length of %s", shown(tube, Length, "mm")), ""})
 		}

@@ -72,7 +72,7 @@ func (f *Field) Format(v float64) string {
 	case Whole:
 		return fmt.Sprintf("%.0f", v)
 	}
-	return FormatSI(v, f.Quantity, f.Unit, 4)
+	return trimmed(FormatSI(v, f.Quantity, f.Unit, 4))
 }
 
 // exact writes a value as a study file holds it, so that reading it gives the same value.

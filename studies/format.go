@@ -3,6 +3,7 @@ package studies
 import (
 	"math"
 	"strconv"
+	"strings"
 )
 
 // FromSI gives the number of an SI value in a unit. The unit must be one of the quantity's.
@@ -30,6 +31,14 @@ func FormatNumber(v float64, significant int) string {
 		return "0"
 	}
 	return s
+}
+
+// trimmed takes the zeros off the end of a decimal fraction.
+func trimmed(s string) string {
+	if !strings.Contains(s, ".") || strings.ContainsAny(s, "eE") {
+		return s
+	}
+	return strings.TrimSuffix(strings.TrimRight(s, "0"), ".")
 }
 
 // FormatSI writes an SI value in a unit, without the unit: temperatures in whole degrees, other

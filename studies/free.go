@@ -27,7 +27,13 @@ func (r *reader) free(n *yaml.Node) {
 				r.fault(e.where, path, &fault{FreeNotPossible, "a result cannot be freed", "limit it, or aim at it"})
 				continue
 			}
-			r.unknownKey(e, "free", fieldPaths(r.fields))
+			hint := "`hotfront fields` lists the paths"
+			if isPrefix(r.fields, e.key+".") {
+				hint = "write the whole path, as in heater.tube_count"
+			} else if s := r.suggest(e.key, fieldPaths(r.fields)); s != "" {
+				hint = s
+			}
+			r.fault(e.where, path, &fault{KeyUnknown, fmt.Sprintf("unknown input %q", clip(e.key)), hint})
 			continue
 		}
 		f := &r.fields[index]
@@ -80,7 +86,7 @@ func (r *reader) freeable(f *Field, e entry, path string) bool {
 
 // freeValues reads {from, to} or {of: [...]}.
 func (r *reader) freeValues(f *Field, free *Free, e entry, path string) bool {
-	entries, ok := r.block(e.value, path)
+	entries, ok := r.blockAs(e.value, path, "as in {from: 1, to: 2} or {of: [1, 2]}")
 	if !ok {
 		return false
 	}
@@ -138,6 +144,10 @@ func (r *reader) freeNumber(f *Field, n *yaml.Node, path string) (float64, bool)
 func (r *reader) freeList(f *Field, free *Free, e entry, path string) bool {
 	if e.value.Kind != yaml.SequenceNode {
 		r.fault(at(e.value), path, &fault{ShapeWrong, "a list is wanted here", "as in [a, b]"})
+		return false
+	}
+	if n := len(e.value.Content); n > mostKeys {
+		r.fault(at(e.value), path, &fault{FreeList, fmt.Sprintf("%d values, at most %d are read", n, mostKeys), ""})
 		return false
 	}
 	if len(e.value.Content) == 0 {

@@ -154,6 +154,7 @@ func (r *reader) scan(n *yaml.Node, path string, depth int) bool {
 		}
 		p := join(path, key.Value)
 		if line, twice := first[key.Value]; twice {
+			r.repeated[at(key)] = true
 			r.fault(at(key), p, &fault{KeyTwice, "given twice", fmt.Sprintf("it is already on line %d", line)})
 		} else {
 			first[key.Value] = key.Line

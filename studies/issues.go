@@ -128,11 +128,15 @@ func (is Issues) with(warning bool) Issues {
 	return out
 }
 
-// Error writes one issue a line.
+// Error writes one issue a line, the first fifty of them.
 func (is Issues) Error() string {
-	lines := make([]string, len(is))
-	for i := range is {
-		lines[i] = is[i].String()
+	const most = 50
+	var lines []string
+	for i := range is[:min(most, len(is))] {
+		lines = append(lines, is[i].String())
+	}
+	if more := len(is) - most; more > 0 {
+		lines = append(lines, fmt.Sprintf("and %d more", more))
 	}
 	return strings.Join(lines, "\n")
 }

@@ -29,7 +29,7 @@ func (r *reader) limits(n *yaml.Node) {
 }
 
 func (r *reader) limit(e entry, path string) {
-	entries, ok := r.block(e.value, path)
+	entries, ok := r.blockAs(e.value, path, "as in {max: 1} or {min: 1}")
 	if !ok {
 		return
 	}
@@ -122,7 +122,10 @@ func (r *reader) limited(l *Limit, e entry, parts map[string]scalar, path string
 }
 
 func (r *reader) limitHint(name string) string {
-	if s := suggestion(name, append(outputNames(r.outputs), fieldPaths(r.fields)...)); s != "" {
+	if isPrefix(r.fields, name+".") {
+		return "write the whole name, as in heater.metal_temperature"
+	}
+	if s := r.suggest(name, append(outputNames(r.outputs), fieldPaths(r.fields)...)); s != "" {
 		return s
 	}
 	return "`hotfront fields` lists the names; a limit of your own needs expr:"
@@ -193,7 +196,10 @@ func (r *reader) aims(e, free entry) {
 		path := join("aims", a.key)
 		o, found := OutputNamed(r.outputs, a.key)
 		if !found {
-			hint := oneOfFew(a.key, outputNames(r.outputs))
+			hint := r.suggest(a.key, outputNames(r.outputs))
+			if hint == "" {
+				hint = "`hotfront fields` lists the results"
+			}
 			if isField(r.fields, a.key) {
 				hint = "an input cannot be an aim: limit it"
 			}
@@ -212,13 +218,6 @@ func (r *reader) aims(e, free entry) {
 	if free.value == nil || len(free.value.Content) == 0 {
 		r.fault(e.where, "aims", &fault{NothingToDo, "nothing is free", "a search needs variables below free:"})
 	}
-}
-
-func oneOfFew(name string, candidates []string) string {
-	if s := suggestion(name, candidates); s != "" {
-		return s
-	}
-	return "`hotfront fields` lists the results"
 }
 
 func outputIndex(outputs []Output, o *Output) int {

@@ -2,6 +2,7 @@ package studies
 
 import (
 	"fmt"
+	"strings"
 	"unicode"
 
 	yaml "go.yaml.in/yaml/v4"
@@ -39,11 +40,13 @@ type reader struct {
 	outputs []Output
 	study   *Study
 
-	raw    map[string]scalar // engine values by path
-	blocks map[string]place  // where each block begins, by path
-	factor map[string]scalar // corrections by name
-	bad    map[string]bool   // engine paths whose value could not be read
-	usable bool              // layout, drive and heat are known
+	raw      map[string]scalar // engine values by path
+	blocks   map[string]place  // where each block begins, by path
+	factor   map[string]scalar // corrections by name
+	bad      map[string]bool   // engine paths whose value could not be read
+	repeated map[place]bool    // keys reported as given twice
+	hints    int               // suggestions looked for
+	usable   bool              // layout, drive and heat are known
 }
 
 // Load reads a study. Each of sets is a path=value that replaces a value of the file. The study is
@@ -51,7 +54,7 @@ type reader struct {
 func Load(file string, data []byte, sets ...string) (*Study, Issues) {
 	r := &reader{
 		file: file, fields: Fields(), outputs: Outputs(),
-		raw: map[string]scalar{}, blocks: map[string]place{}, factor: map[string]scalar{}, bad: map[string]bool{},
+		raw: map[string]scalar{}, blocks: map[string]place{}, factor: map[string]scalar{}, bad: map[string]bool{}, repeated: map[place]bool{},
 	}
 	r.study = &Study{Evaluations: DefaultEvaluations, Seed: DefaultSeed, fields: r.fields, outputs: r.outputs}
 	if root := r.parse(data); root != nil && r.scan(root, "", 0) {
@@ -171,8 +174,16 @@ func badText(s string, longest int) string {
 	return ""
 }
 
+// mostKeys is how many keys a block, or values a list, may have.
+const mostKeys = 1000
+
 // block gives the entries of a block, or says that there is none. Keys given twice were reported.
 func (r *reader) block(n *yaml.Node, path string) ([]entry, bool) {
+	return r.blockAs(n, path, "")
+}
+
+// blockAs is block with an example for the message.
+func (r *reader) blockAs(n *yaml.Node, path, example string) ([]entry, bool) {
 	if n.Kind != yaml.MappingNode {
 		what := "a value"
 		switch {
@@ -181,7 +192,11 @@ func (r *reader) block(n *yaml.Node, path string) ([]entry, bool) {
 		case n.Tag == "!!null":
 			what = "nothing"
 		}
-		r.fault(at(n), path, &fault{ShapeWrong, "a block of keys is wanted here, not " + what, ""})
+		r.fault(at(n), path, &fault{ShapeWrong, "a block of keys is wanted here, not " + what, example})
+		return nil, false
+	}
+	if keys := len(n.Content) / 2; keys > mostKeys {
+		r.fault(at(n), path, &fault{ShapeWrong, fmt.Sprintf("%d keys in one block, at most %d are read", keys, mostKeys), ""})
 		return nil, false
 	}
 	var entries []entry
@@ -209,7 +224,27 @@ func (r *reader) scalar(n *yaml.Node, path string) (scalar, bool) {
 }
 
 func (r *reader) unknownKey(e entry, path string, candidates []string) {
-	r.fault(e.where, join(path, e.key), &fault{KeyUnknown, fmt.Sprintf("unknown key %q", clip(e.key)), oneOf(e.key, candidates)})
+	r.fault(e.where, join(path, e.key), &fault{KeyUnknown, fmt.Sprintf("unknown key %q", clip(e.key)), r.suggestOne(e.key, candidates)})
+}
+
+// mostHints is how many suggestions one reading looks for: a file with more mistakes is no study,
+// and looking for thousands takes time.
+const mostHints = 200
+
+// suggest is the hint for an unknown name, "" when no candidate is near.
+func (r *reader) suggest(word string, candidates []string) string {
+	if r.hints++; r.hints > mostHints {
+		return ""
+	}
+	return suggestion(word, candidates)
+}
+
+// suggestOne is suggest with a list of the candidates when none is near.
+func (r *reader) suggestOne(word string, candidates []string) string {
+	if s := r.suggest(word, candidates); s != "" || r.hints > mostHints {
+		return s
+	}
+	return "one of " + strings.Join(candidates, ", ")
 }
 
 func contains(words []string, word string) bool {

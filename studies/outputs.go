@@ -87,6 +87,7 @@ func Outputs() []Output {
 
 		{"regenerator.effectiveness", "heat returned over heat stored and returned", Number, "-", func(p *p) *float64 { return &p.RegeneratorEffectiveness }},
 		{"regenerator.heat", "heat put into the matrix by the hot blow", Power, "kW", func(p *p) *float64 { return &p.RegeneratorHeat }},
+		{"regenerator.pressure_heat", "net enthalpy flow through the matrix that goes with pressure, not with the lag of the film; either sign", Power, "W", func(p *p) *float64 { return &p.RegeneratorPressureHeat }},
 		{"regenerator.ntu", "number of transfer units of one blow, cycle-mean film", Number, "-", func(p *p) *float64 { return &p.RegeneratorNTU }},
 		{"regenerator.reynolds", "cycle-mean Reynolds number in the matrix", Number, "-", func(p *p) *float64 { return &p.RegeneratorReynolds }},
 		{"regenerator.matrix_swing", "largest swing of the matrix temperature over a cycle", TemperatureDifference, "K", func(p *p) *float64 { return &p.RegeneratorMatrixSwing }},
@@ -111,7 +112,7 @@ func lossOutputs() []Output {
 		{"leakage", "past the piston seal; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.Leakage }},
 		{"drive", "in the drive; to the surroundings", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.Drive }},
 		{"seal_friction", "seals and bearings; to the surroundings", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.SealFriction }},
-		{"reheat", "net enthalpy flow through the regenerator; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.Reheat }},
+		{"reheat", "carried through the regenerator by gas that lags behind its metal; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.Reheat }},
 		{"matrix_conduction", "through wires and gas, with dispersion; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.MatrixConduction }},
 		{"canister_conduction", "along the canister walls; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.CanisterConduction }},
 		{"cylinder_conduction", "along the cylinder wall; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.CylinderConduction }},

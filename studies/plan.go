@@ -116,12 +116,16 @@ func (r *reader) mayFail(part, inside, outside string) {
 		if (!ok && !free) || (!free && !tubeFree) || r.bad[path] {
 			continue
 		}
-		if high > tube {
+		if high > tube || name == outside && high == tube {
 			hint := "give or free " + part + "." + outside + " instead"
 			if name == outside {
 				hint = "such designs fail"
 			}
-			r.fault(given.place, "engine."+path, &fault{MayFail,
+			p := given.place
+			if !ok {
+				p = r.blockOf(path)
+			}
+			r.fault(p, "engine."+path, &fault{MayFail,
 				fmt.Sprintf("reaches %s, the shortest tube has %s", shown(high, Length, "mm"), shown(tube, Length, "mm")), hint})
 		}
 	}

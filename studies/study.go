@@ -117,7 +117,7 @@ func (l *Limit) Margin(value float64) float64 {
 // Format writes a value of the limited quantity as tables show it, without its unit.
 func (l *Limit) Format(v float64) string {
 	if l.Unit == "" {
-		return FormatNumber(v, 4)
+		return trimmed(FormatNumber(v, 4))
 	}
-	return FormatSI(v, l.Quantity, l.Unit, 4)
+	return trimmed(FormatSI(v, l.Quantity, l.Unit, 4))
 }
