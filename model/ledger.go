@@ -115,16 +115,21 @@ func (w *Workspace) setHeatLosses(dst *Performance, e *Engine, c *Corrections) {
 	l := &dst.Losses
 	f := e.Speed
 	first, last := w.matrixCells()
-	enthalpy, conduction, n := 0.0, 0.0, 0.0
+	enthalpy, conduction, lag, n := 0.0, 0.0, 0.0, 0.0
 	for i := first; i < last; i++ {
 		enthalpy += r.Enthalpy[i]
 		conduction += r.Conduction[i]
+		lag += 0.5 * (r.Lag[i] + r.Lag[i+1]) * (r.Wall[i] - r.Wall[i+1])
 		n++
 	}
-	l.Reheat = enthalpy / n * f
+	// The gas lags behind the metal by cp M (dT a cell)/UA, and carries cp M times that. The rest of the
+	// net enthalpy flow goes with pressure: what dh/dp of a real gas carries, and compression heat that
+	// a light matrix stores. It moves energy either way and is no loss.
+	l.Reheat = lag / n * f
+	dst.RegeneratorPressureHeat = enthalpy/n*f - l.Reheat
 	l.MatrixConduction = conduction / n * f
 	dst.RegeneratorHeat = r.HeatIntoMatrix * f
-	dst.RegeneratorEffectiveness = 1 - l.Reheat/(dst.RegeneratorHeat+math.Abs(l.Reheat))
+	dst.RegeneratorEffectiveness = 1 - l.Reheat/(dst.RegeneratorHeat+l.Reheat)
 	dst.RegeneratorMatrixSwing = r.Swing
 	film, flow := 0.0, 0.0
 	for i := first; i <= last; i++ {

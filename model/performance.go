@@ -46,6 +46,7 @@ type Performance struct {
 
 	RegeneratorEffectiveness float64 // heat returned over heat stored and returned [-]
 	RegeneratorHeat          float64 // heat put into the matrix by the hot blow [W]
+	RegeneratorPressureHeat  float64 // net enthalpy flow through the matrix that goes with pressure, not with the film's lag; either sign [W]
 	RegeneratorNTU           float64 // of one blow, cycle-mean film [-]
 	RegeneratorReynolds      float64 // cycle-mean [-]
 	RegeneratorMatrixSwing   float64 // largest swing of the matrix temperature over a cycle [K]
@@ -73,7 +74,7 @@ type Losses struct {
 	Leakage             float64 // past the piston seal; to the coolant [W]
 	Drive               float64 // in the drive, by Senft's theorem; to the surroundings [W]
 	SealFriction        float64 // seals and bearings; to the surroundings [W]
-	Reheat              float64 // net enthalpy flow through the regenerator; to the coolant, inside the cycle [W]
+	Reheat              float64 // enthalpy carried through the regenerator by gas that lags behind its metal; to the coolant, inside the cycle [W]
 	MatrixConduction    float64 // through wires and gas, with dispersion; to the coolant, inside the cycle [W]
 	CanisterConduction  float64 // to the coolant [W]
 	CylinderConduction  float64 // to the coolant [W]

@@ -28,6 +28,7 @@ type Result struct {
 	FilmMean                               [MaxCells]float64 // time-mean UA [W/K]
 	FlowMean                               [MaxCells]float64 // time-mean |M| over face i|i+1 [kg/s]
 	Enthalpy                               [MaxCells]float64 // net enthalpy over face i|i+1 [J]
+	Lag                                    [MaxCells]float64 // integral (cp M)^2/UA dt of a matrix cell [J/K]
 	Conduction                             [MaxCells]float64 // axial conduction between matrix cells i and i+1 [J]
 	HeatIntoMatrix                         float64           // heat stored by the matrix over a cycle [J]
 	Outer                                  float64           // temperature behind the heater walls [K]
@@ -293,6 +294,7 @@ func (s *Solver) collect(dst *Result) {
 		dst.FilmMean[i] = s.sums.film[i] / path.Period
 		dst.FlowMean[i] = s.sums.flowAbs[i] / path.Period
 		dst.Enthalpy[i] = s.sums.enthalpy[i]
+		dst.Lag[i] = s.sums.blow[i]
 		if s.kind[i] == Matrix {
 			dst.HeatIntoMatrix += s.sums.heatIn[i]
 			dst.Swing = max(dst.Swing, s.sums.wallMax[i]-s.sums.wallMin[i])
