@@ -34,7 +34,7 @@ func TestLimitResults(t *testing.T) {
 	perf := model.Performance{HeaterMetalTemperature: 1000, HeaterStressUtilisation: 1.25, BrakePower: 2500}
 	got := s.LimitResults(&s.Engine, &perf)
 	want := []LimitResult{
-		{"heater.metal_temperature", 1000, 1023.15, 1023.15 - 1000, true},
+		{"heater.metal_temperature", 1000, 1023.15, s.Limits[0].Bound - 1000, true},
 		{"heater.stress_utilisation", 1.25, 1, -0.25, false},
 		{"brake_power", 2500, 2000, 500, true},
 		{"tubing", 36 * s.Engine.Heater.TubeLength, 20, 20 - 36*s.Engine.Heater.TubeLength, true},
