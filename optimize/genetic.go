@@ -5,6 +5,7 @@ import (
 	"math"
 	oldrand "math/rand"
 	"math/rand/v2"
+	"slices"
 
 	"github.com/MaxHalford/eaopt"
 
@@ -12,11 +13,12 @@ import (
 )
 
 const (
-	defaultPopulation = 40
-	// With limits and few variables a population of 40 loses corners of the feasible front.
+	defaultPopulation = 32
+	// With limits and few variables a smaller population loses corners of the feasible front.
 	limitedPopulation = 60
 	limitedDims       = 8
 
+	neighbours  = 4  // one in so many of the first population is a neighbour of a start design
 	retries     = 8  // attempts to vary a child that was known before
 	barrenLimit = 50 // generations without a new design that end the search
 )
@@ -24,9 +26,13 @@ const (
 // member is one design of the population. It does not change once it is evaluated.
 type member struct {
 	u         []float64 // place in the unit cube
-	seq       int
+	x         []float64 // natural values
 	f         []float64
 	violation float64 // +Inf for a failed design
+
+	op     int       // operator that made it
+	parent *member   // whom its operator is judged against, nil once judged
+	origin []float64 // place of the parent, nil if the parent met the limits better
 }
 
 // genome hands a member to eaopt, which keeps a population sorted by fitness and no more: variation and
@@ -133,16 +139,23 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 	for i := range pop.Individuals {
 		members[i] = pop.Individuals[i].Genome.(genome).member
 	}
-	us, xs, err := g.brood(members)
+	children, err := g.brood(members)
 	if err != nil {
 		return err
 	}
-	children, err := g.evaluate(us, xs)
+	children, err = g.evaluate(children)
 	if err != nil {
 		return err
 	}
-	g.vary.credit(members, children)
-	members = survive(append(members, children...), g.size, g.relax.level(len(g.session.points)))
+	all := append(members, children...)
+	kept := survive(all, g.size, g.relax.level(len(g.session.points)))
+	alive := make([]bool, len(all))
+	members = make([]*member, len(kept))
+	for k, i := range kept {
+		alive[i] = true
+		members[k] = all[i]
+	}
+	g.vary.credit(all, len(all)-len(children), alive)
 	if len(members) < len(pop.Individuals) {
 		panic("optimize: population shrank")
 	}
@@ -159,95 +172,105 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 // begin makes and evaluates the first population. It may be smaller than asked for where the space is.
 func (g *generation) begin(rng *rand.Rand) ([]*member, error) {
 	sp := g.session.space
-	var us, xs [][]float64
-	add := func(u, x []float64) {
-		us, xs = append(us, u), append(xs, x)
+	var first []*member
+	for _, x := range sp.start { // the designs as they are, not as they decode
+		m := &member{u: make([]float64, sp.dims()), x: slices.Clone(x)}
+		sp.encode(m.u, x)
+		first = append(first, m)
 	}
-	for _, x := range sp.start {
-		u := make([]float64, sp.dims())
-		sp.encode(u, x)
-		add(u, append([]float64(nil), x...)) // the design as it is, not as it decodes
-	}
-	starts := len(us)
-	if starts > 0 {
-		for i := range max(0, min(g.size/4, g.size-starts)) {
-			u := append([]float64(nil), us[i%starts]...)
+	if starts := len(first); starts > 0 {
+		for i := range max(0, min(g.size/neighbours, g.size-starts)) {
+			u := slices.Clone(first[i%starts].u)
 			g.vary.nudge(u)
-			x := make([]float64, sp.dims())
-			sp.decode(x, u)
-			add(u, x)
+			first = append(first, sp.member(u))
 		}
 	}
-	for _, u := range sample.Latin(rng, max(0, g.size-len(us)), sp.dims()) {
-		x := make([]float64, sp.dims())
-		sp.decode(x, u)
-		add(u, x)
+	for _, u := range sample.Latin(rng, max(0, g.size-len(first)), sp.dims()) {
+		first = append(first, sp.member(u))
 	}
-	members, err := g.evaluate(us, xs)
+	first, err := g.evaluate(first)
 	if err != nil {
 		return nil, err
 	}
-	g.relax = newRelaxation(members, g.size)
-	return survive(members, g.size, g.relax.level(0)), nil
+	g.relax = newRelaxation(first, g.size)
+	members := make([]*member, 0, g.size)
+	for _, i := range survive(first, g.size, g.relax.level(0)) {
+		members = append(members, first[i])
+	}
+	return members, nil
 }
 
-// evaluate answers designs and drops repetitions.
-func (g *generation) evaluate(us, xs [][]float64) ([]*member, error) {
+// member makes a member that is not evaluated yet and moves u to its values' own places.
+func (s *space) member(u []float64) *member {
+	m := &member{u: u, x: make([]float64, len(u))}
+	s.decode(m.x, u)
+	return m
+}
+
+// evaluate answers members as one batch and drops repetitions.
+func (g *generation) evaluate(members []*member) ([]*member, error) {
 	first := len(g.session.points)
-	seqs := make([]int, len(xs))
+	xs, seqs := make([][]float64, len(members)), make([]int, len(members))
+	for i, m := range members {
+		xs[i] = m.x
+	}
 	if err := g.ask(xs, seqs); err != nil {
 		return nil, err
 	}
-	members := make([]*member, 0, len(xs))
-	for i, seq := range seqs {
-		if seq != first+len(members) {
+	kept := members[:0]
+	for i, m := range members {
+		if seqs[i] != first+len(kept) {
 			continue // known before, or a twin within the batch
 		}
-		members = append(members, &member{u: us[i], seq: seq, f: g.session.points[seq].F, violation: g.session.violation[seq]})
+		m.f, m.violation = g.session.points[seqs[i]].F, g.session.violation[seqs[i]]
+		if m.parent != nil && m.violation <= m.parent.violation {
+			m.origin = m.parent.u
+		}
+		kept = append(kept, m)
 	}
-	return members, nil
+	return kept, nil
 }
 
 // brood makes the children of a generation: designs never asked for before as far as they can be found. In
 // a small space of whole numbers and choices the scanner finds what chance does not; when there is none
 // left, or for barrenLimit generations no new design turned up in a large space, the search is exhausted.
-func (g *generation) brood(members []*member) (us, xs [][]float64, err error) {
+func (g *generation) brood(members []*member) ([]*member, error) {
 	sp := g.session.space
 	known := func(x []float64) bool {
 		_, found := g.session.lookup(x)
 		return found
 	}
 	g.vary.prepare(members)
-	fresh := false
+	children := make([]*member, 0, g.size)
 	for range g.size {
-		u, x := make([]float64, sp.dims()), make([]float64, sp.dims())
-		g.vary.child(u, members)
-		sp.decode(x, u)
-		for try := 0; known(x); try++ {
+		u := make([]float64, sp.dims())
+		op, parent := g.vary.child(u, members)
+		m := sp.member(u)
+		for try := 0; known(m.x); try++ {
 			g.session.progress.Duplicates++
 			if try == retries {
-				x = nil
-				break
-			}
-			g.vary.nudge(u)
-			sp.decode(x, u)
-		}
-		if x == nil {
-			x = make([]float64, sp.dims())
-			if !g.scan.next(x, sp, known) {
+				if !g.scan.next(m.x, sp, known) {
+					m = nil
+					break
+				}
+				sp.encode(m.u, m.x)
 				continue
 			}
-			sp.encode(u, x)
+			g.vary.nudge(m.u)
+			sp.decode(m.x, m.u)
 		}
-		fresh = true
-		us, xs = append(us, u), append(xs, x)
+		if m != nil {
+			m.op, m.parent = op, parent
+			children = append(children, m)
+		}
+	}
+	if len(children) > 0 {
+		g.barren = 0
+		return children, nil
 	}
 	g.barren++
-	if fresh {
-		g.barren = 0
+	if sp.size <= scanLimit || g.barren == barrenLimit {
+		return nil, errExhausted
 	}
-	if g.barren > 0 && (sp.size <= scanLimit || g.barren == barrenLimit) {
-		return nil, nil, errExhausted
-	}
-	return us, xs, nil
+	return nil, nil
 }

@@ -8,10 +8,10 @@ import (
 	"hotfront/optimize/pareto"
 )
 
-// survive keeps size members of all, best first: by fronts in the feasible-first order, the last front that
-// does not fit whole truncated by hypervolume contribution on aims scaled to that front's own range. A
-// violation up to epsilon counts as none.
-func survive(all []*member, size int, epsilon float64) []*member {
+// survive picks size of all, best first, and returns their indices: by fronts in the feasible-first order, the
+// last front that does not fit whole truncated by hypervolume contribution on aims scaled to that front's own
+// range. A violation up to epsilon counts as none.
+func survive(all []*member, size int, epsilon float64) []int {
 	points := make([][]float64, len(all))
 	violations := make([]float64, len(all))
 	for i, m := range all {
@@ -24,7 +24,7 @@ func survive(all []*member, size int, epsilon float64) []*member {
 	if err != nil {
 		panic(err) // a session lets no NaN through
 	}
-	kept := make([]*member, 0, min(size, len(all)))
+	kept := make([]int, 0, min(size, len(all)))
 	for _, front := range fronts {
 		room := size - len(kept)
 		if room == 0 {
@@ -33,15 +33,13 @@ func survive(all []*member, size int, epsilon float64) []*member {
 		if len(front) > room {
 			front = truncate(points, front, room)
 		}
-		for _, i := range front {
-			kept = append(kept, all[i])
-		}
+		kept = append(kept, front...)
 	}
 	return kept
 }
 
 // margin is how far the reference of the truncation lies beyond the front, in parts of the front's range.
-const margin = 1.0
+const margin = 0.1
 
 // truncate picks keep members of a front.
 func truncate(points [][]float64, front []int, keep int) []int {
