@@ -43,3 +43,24 @@ func TestLimitResults(t *testing.T) {
 		t.Errorf("got\n%+v\nwant\n%+v", got, want)
 	}
 }
+
+func TestFormatsOfTables(t *testing.T) {
+	s := mustLoad(t, refuge(t))
+	for path, want := range map[string]string{"charge_pressure": "60", "drive.phase_angle": "90", "heater.tube_count": "36",
+		"regenerator.wire_diameter": "0.06", "gas": "helium", "heat.tube_wall": "700"} {
+		f, ok := FieldNamed(s.Fields(), path)
+		if !ok || f.Format(f.Get(&s.Engine)) != want {
+			t.Errorf("%s: got %s, want %s", path, f.Format(f.Get(&s.Engine)), want)
+		}
+	}
+	power, _ := OutputNamed(s.Outputs(), "brake_power")
+	if got := power.Format(4263.7); got != "4.26" {
+		t.Errorf("brake power %s", got)
+	}
+	if got := s.Limits[0].Format(1000.2); got != "727" {
+		t.Errorf("limit in degC %s", got)
+	}
+	if got := s.Limits[3].Format(10.8); got != "10.8" {
+		t.Errorf("limit in m %s", got)
+	}
+}

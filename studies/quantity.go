@@ -305,7 +305,7 @@ func badSeparator(s, rest string, i int) *fault {
 	case next == '_' || next == '\'':
 		return &fault{NumberFormat, fmt.Sprintf("%q has a separator in its number", clip(s)),
 			fmt.Sprintf("write %s", clip(s[:i]+strings.NewReplacer("_", "", "'", "").Replace(rest)))}
-	case next >= '0' && next <= '9':
+	case next >= '0' && next <= '9' && otherSpelling(rest) == "":
 		return &fault{NumberFormat, fmt.Sprintf("%q has a space in its number", clip(s)),
 			fmt.Sprintf("write %s", clip(s[:i]+rest))}
 	case next == '.' || next == '+' || next == '-':

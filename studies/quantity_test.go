@@ -155,3 +155,41 @@ func FuzzQuantity(f *testing.F) {
 		}
 	})
 }
+
+// TestOtherSpellings: common spellings of a unit lead to ours.
+func TestOtherSpellings(t *testing.T) {
+	for spelling, want := range map[string]string{
+		"C": "degC", "ccm": "cm3", "1/min": "rpm", "1/s": "Hz", "°": "deg", "dm3": "l", "µm": "um", "Nm": "N m",
+		"W/m2K": "W/(m2 K)", "percent": "%", "years": "a", "hours": "h",
+	} {
+		u, known := unitOf(want, Number)
+		if !known {
+			t.Errorf("%s is no unit", want)
+			continue
+		}
+		_, f := parseQuantity("5 "+spelling, u.quantity)
+		if f == nil || f.code != UnitUnknown || f.hint != didYouMean(want) {
+			t.Errorf("%s: %v", spelling, f)
+		}
+	}
+}
+
+func TestDimensionNames(t *testing.T) {
+	for q := range quantities {
+		want := q.String()
+		switch q {
+		case Angle:
+			want = "plain number"
+		case TemperatureDifference:
+			want = "temperature"
+		case Energy:
+			want = "torque" // the same exponents
+		}
+		if got := q.dimension().String(); got != want {
+			t.Errorf("%s is called %s", q, got)
+		}
+	}
+	if got := (dimension{1, 0, -2, 0.5}).String(); got != "m s^-2 K^0.5" {
+		t.Errorf("got %s", got)
+	}
+}
