@@ -1,163 +1,118 @@
 package cycle
 
 import (
-	"encoding/json"
+	"fmt"
 	"math"
-	"os"
 	"testing"
 
 	"hotfront/model/correlation"
-	"hotfront/model/gas"
 )
 
-type reference struct {
-	Name, Drive, Gas                string
-	Vse, Vsc, Vcle, Vclc, Alpha     float64
-	R, L, E, Bore, Drod             float64
-	Vh, Vr, Vk, Th, Tk, Pmean, Freq float64
-	Result                          map[string]float64
-}
-
-// perfect gives the constant-property gas of the reference computation.
-func perfect(name string) gas.Gas {
-	switch name {
-	case "He":
-		return gas.Perfect(2077.265, 5.0/3, 2e-5, 0.15)
-	case "H2":
-		return gas.Perfect(4124.2, 1.40, 1e-5, 0.2)
+// quantities of a solved machine, under the names of the reference.
+func quantities(r *Result, p *Path) map[string]float64 {
+	return map[string]float64{
+		"W_e": r.WorkExpansion, "W_c": r.WorkCompression, "W": r.WorkExpansion + r.WorkCompression,
+		"Q_h": heat(r, p, PartHeater), "Q_k": heat(r, p, PartCooler),
+		"p_max": r.PressureMax, "p_min": r.PressureMin,
+		"Te_mean": r.Temperature[0], "Tc_mean": r.Temperature[p.N-1],
 	}
-	return gas.Perfect(287.05, 1.40, 2e-5, 0.03)
-}
-
-// volumes fills the spaces of path from functions of the crank angle.
-func volumes(path *Path, steps int, freq float64, at func(th float64) (ve, dve, vc, dvc float64)) {
-	m := &path.Fine
-	m.Steps = steps
-	path.Period = 1 / freq
-	w := 2 * math.Pi * freq
-	dth := 2 * math.Pi / float64(steps)
-	for n := range steps {
-		for j, c := range []float64{Gamma, 1} {
-			k := 2*n + j
-			ve, dve, vc, dvc := at((float64(n) + c) * dth)
-			m.Ve[k], m.DVe[k], m.Vc[k], m.DVc[k] = ve, dve*w, vc, dvc*w
-		}
-	}
-	m.Ve0, _, m.Vc0, _ = at(0)
-}
-
-func sinusoid(c *reference) func(th float64) (ve, dve, vc, dvc float64) {
-	al := c.Alpha * math.Pi / 180
-	return func(th float64) (ve, dve, vc, dvc float64) {
-		return c.Vcle + c.Vse/2*(1+math.Cos(th+al)), -c.Vse / 2 * math.Sin(th+al),
-			c.Vclc + c.Vsc/2*(1+math.Cos(th)), -c.Vsc / 2 * math.Sin(th)
-	}
-}
-
-// rhombic is written here a second time, from the drive's geometry, so that the cycle's test does
-// not lean on package drive.
-func rhombic(c *reference) func(th float64) (ve, dve, vc, dvc float64) {
-	area := math.Pi / 4 * c.Bore * c.Bore
-	rod := math.Pi / 4 * c.Drod * c.Drod
-	pos := func(t float64) (yp, yd, vp, vd float64) {
-		u := c.E - c.R*math.Cos(t)
-		b := math.Sqrt(c.L*c.L - u*u)
-		db := -u * c.R * math.Sin(t) / b
-		return c.R*math.Sin(t) + b, c.R*math.Sin(t) - b, c.R*math.Cos(t) + db, c.R*math.Cos(t) - db
-	}
-	top, gap := math.Inf(-1), math.Inf(1)
-	for i := range 200001 {
-		yp, yd, _, _ := pos(2 * math.Pi * float64(i) / 200000)
-		top = max(top, yd)
-		gap = min(gap, yd-yp)
-	}
-	return func(th float64) (ve, dve, vc, dvc float64) {
-		yp, yd, vp, vd := pos(-th)
-		return c.Vcle + area*(top-yd), area * vd, c.Vclc + (area-rod)*(yd-yp-gap), -(area - rod) * (vd - vp)
-	}
-}
-
-// idealPath is the five-space machine of the ideal analyses with nr matrix cells: perfect
-// exchangers, adiabatic (film 0) or isothermal spaces, linear matrix profile.
-func idealPath(c *reference, nr int, space float64) *Path {
-	p := new(Path)
-	p.Gas = perfect(c.Gas)
-	p.Mean = c.Pmean
-	p.FixedRun = true
-	const perfectFilm = 1e9
-	add := func(cell Cell) {
-		p.Cells[p.N] = cell
-		p.N++
-	}
-	add(Cell{Kind: Space, Part: PartExpansion, Wall: c.Th, FixedFilm: space})
-	add(Cell{Kind: Tube, Part: PartHeater, Volume: c.Vh, Wall: c.Th, Outer: c.Th, FixedFilm: perfectFilm})
-	for i := range nr {
-		t := c.Th + (c.Tk-c.Th)*(float64(i)+0.5)/float64(nr)
-		if nr == 1 {
-			t = (c.Th - c.Tk) / math.Log(c.Th/c.Tk)
-		}
-		add(Cell{Kind: Matrix, Part: PartRegenerator, Volume: c.Vr / float64(nr), Wall: t, FixedFilm: perfectFilm, Capacity: 1e9})
-	}
-	add(Cell{Kind: Tube, Part: PartCooler, Volume: c.Vk, Wall: c.Tk, Outer: c.Tk, FixedFilm: perfectFilm})
-	add(Cell{Kind: Space, Part: PartCompression, Wall: c.Tk, FixedFilm: space})
-	return p
-}
-
-func loadReference(t *testing.T) []reference {
-	t.Helper()
-	b, err := os.ReadFile("../../testdata/reference/adiabatic_reference.json")
-	if err != nil {
-		t.Fatal(err)
-	}
-	var cases []reference
-	if err := json.Unmarshal(b, &cases); err != nil {
-		t.Fatal(err)
-	}
-	return cases
 }
 
 // TestAdiabaticLimit holds the solver against the ideal adiabatic cycle of four machines, integrated
 // by a general-purpose integrator to tight tolerance (testdata/reference/adiabatic_reference.json,
-// made by adiabatic_reference.py).
+// made by adiabatic_reference.py): 0.1 % at the 60 steps of the production grid, mean temperatures of
+// both spaces too.
+//
+// The net work of the low-difference machine is what is left of two works eleven times as large, so
+// 0.1 % of these is 1 % of it. It is held to 0.5 % as the solver accepts the state, and to 0.2 % in the
+// settled state: the rest is the solver's tolerance, which is a share of the heat.
 func TestAdiabaticLimit(t *testing.T) {
 	s := NewSolver(correlation.NewFast())
 	for _, c := range loadReference(t) {
-		at := sinusoid(&c)
-		if c.Drive == "rhombic" {
-			at = rhombic(&c)
-		}
-		for _, steps := range []int{60, 120, 240} {
-			p := idealPath(&c, 20, 0)
-			volumes(p, steps, c.Freq, at)
+		t.Run(c.Name, func(t *testing.T) {
+			p := idealPath(&c, 40, 0)
+			volumes(&p.Fine, 60, c.Freq, c.law())
 			var r Result
 			s.Solve(&r, p, DefaultSettings())
-			for _, q := range []struct {
-				name      string
-				got, want float64
-			}{
-				{"W_e", r.WorkExpansion, c.Result["W_e"]},
-				{"W_c", r.WorkCompression, c.Result["W_c"]},
-				{"W", r.WorkExpansion + r.WorkCompression, c.Result["W"]},
-				{"p_max", r.PressureMax, c.Result["p_max"]},
-				{"p_min", r.PressureMin, c.Result["p_min"]},
-				{"Te", r.Temperature[0], c.Result["Te_mean"]},
-				{"Tc", r.Temperature[p.N-1], c.Result["Tc_mean"]},
-				{"Q_h", heat(&r, p, PartHeater), c.Result["Q_h"]},
-				{"Q_k", heat(&r, p, PartCooler), c.Result["Q_k"]},
-			} {
-				e := q.got/q.want - 1
-				t.Logf("%s steps %d cycles %d conv %v %s %.6g %.6g %+.1e", c.Name, steps, r.Cycles, r.Converged, q.name, q.got, q.want, e)
+			if !r.Converged {
+				t.Fatalf("not converged after %d cycles", r.Cycles)
 			}
-		}
+			accepted := quantities(&r, p)
+			settled(t, s, &r, p, 20)
+			rest := quantities(&r, p)
+			for name := range accepted {
+				want := c.Result[name]
+				now, later := 1e-3, 1e-3
+				if name == "W" && c.Th < 500 {
+					now, later = 5e-3, 2e-3
+				}
+				near(t, "as accepted, "+name, accepted[name], want, now)
+				near(t, "settled, "+name, rest[name], want, later)
+			}
+		})
 	}
 }
 
-func heat(r *Result, p *Path, part Part) float64 {
-	sum := 0.0
-	for i := range p.N {
-		if p.Cells[i].Part == part {
-			sum += r.Heat[i]
+// TestAdiabaticOrder shows that the time stepper is of second order: the error of works and heats
+// falls by four a halving of the step. The flow changes direction four times a cycle, and the adiabatic
+// spaces then change what they draw at once, which a step does not meet at its edge; single figures
+// scatter by that, so the test takes the root mean square over six figures and four machines and two
+// halvings, and asks for ten, not sixteen.
+func TestAdiabaticOrder(t *testing.T) {
+	s := NewSolver(correlation.NewFast())
+	grids := []int{30, 60, 120, 480}
+	errs := make([]float64, len(grids)-1)
+	for _, c := range loadReference(t) {
+		at := c.law()
+		var all []map[string]float64
+		for _, steps := range grids {
+			p := idealPath(&c, 10, 0)
+			volumes(&p.Fine, steps, c.Freq, at)
+			var r Result
+			settled(t, s, &r, p, 20)
+			all = append(all, quantities(&r, p))
+		}
+		finest := all[len(grids)-1]
+		for g := range errs {
+			for _, name := range []string{"W_e", "W_c", "Q_h", "Q_k", "p_max", "p_min"} {
+				e := all[g][name]/finest[name] - 1
+				errs[g] += e * e
+			}
 		}
 	}
-	return sum
+	for g := range errs {
+		errs[g] = math.Sqrt(errs[g] / 24)
+	}
+	t.Logf("root mean square error at 30, 60, 120 steps: %.1e %.1e %.1e", errs[0], errs[1], errs[2])
+	if errs[0] < 10*errs[2] {
+		t.Errorf("error %.2e at 30 steps, %.2e at 120: order below %.1f", errs[0], errs[2], math.Log2(errs[0]/errs[2])/2)
+	}
+	if errs[1] > 3e-4 {
+		t.Errorf("error %.2e at the 60 steps of the production grid", errs[1])
+	}
+}
+
+// settled runs plain cycles: no acceleration, no coarse grid, three Newton steps a stage and no judgement
+// of convergence, until the state of the discrete equations is reached to rounding.
+func settled(t *testing.T, s *Solver, dst *Result, p *Path, cycles int) {
+	t.Helper()
+	s.path, s.move = p, &p.Fine
+	*dst = Result{}
+	s.begin(Settings{})
+	for c := range cycles {
+		s.transport(c == 0)
+		s.conserved()
+		s.newton = 3
+		if !s.run() {
+			t.Fatal(fmt.Sprintf("cycle %d left the physical range", c+1))
+		}
+		if c == cycles-1 {
+			break
+		}
+		mean := s.sums.pressure / p.Period
+		s.moveWalls()
+		s.moveMatrix()
+		s.p *= p.Mean / mean
+	}
+	s.collect(dst)
 }
