@@ -9,6 +9,8 @@ func (c Cause) String() string {
 		return "a quantity is not finite or has the wrong sign"
 	case HeatedTooLong:
 		return "heated or cooled length above the tube length"
+	case BoresDiffer:
+		return "displacer and piston of a beta machine have different bores"
 	case TubesOverlap:
 		return "heater tubes do not fit on their ring"
 	case BundleTooWide:

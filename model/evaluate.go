@@ -53,7 +53,7 @@ func (w *Workspace) evaluate(dst *Performance, e *Engine, c *Corrections) Cause 
 	if dst.ForcedWork < 0 {
 		return BufferTooSmall
 	}
-	if dst.HeatIn < leastHeat*w.heat(cycle.PartHeater)*e.Speed {
+	if heater := w.heat(cycle.PartHeater) * e.Speed; heater <= 0 || dst.HeatIn < leastHeat*heater {
 		return NoHeat
 	}
 	w.setMetal(dst, e)

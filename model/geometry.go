@@ -44,6 +44,9 @@ func (g *geometry) set(e *Engine) Cause {
 	if !finiteInputs(e, g) {
 		return BadInput
 	}
+	if e.Layout == Beta && math.Abs(g.hot.Bore-g.cold.Bore) > 1e-9*g.hot.Bore {
+		return BoresDiffer
+	}
 	if h.HeatedLength > h.TubeLength*(1+1e-9) || c.CooledLength > c.TubeLength*(1+1e-9) {
 		return HeatedTooLong
 	}

@@ -104,6 +104,7 @@ const (
 	None              Cause = iota
 	BadInput                // a quantity is not finite or has the wrong sign
 	HeatedTooLong           // heated (cooled) length above tube length
+	BoresDiffer             // displacer and piston of a beta machine have different bores
 	TubesOverlap            // tubes do not fit on their ring
 	BundleTooWide           // cooler tubes do not fit in their shell
 	RodTooShort             // the connecting rod cannot turn

@@ -18,8 +18,11 @@ func (w *Workspace) powerBodies(e *Engine) int {
 func (w *Workspace) bodyVolumes(e *Engine, b int) {
 	g, m, p := &w.geometry, &w.motion, &w.Path
 	area := g.coldArea
-	if b == 1 {
+	switch {
+	case b == 1:
 		area = g.hotArea
+	case e.Layout == Beta:
+		area -= g.hotRodArea // the displacer's rod passes through the piston
 	}
 	dth := 2 * pi / float64(p.Fine.Steps)
 	var at drive.Motion
@@ -97,6 +100,9 @@ func (w *Workspace) setDrive(dst *Performance, e *Engine, c *Corrections, forced
 	l := &dst.Losses
 	work := dst.IndicatedPower / f
 	dst.ForcedWork = forced
+	// Forced work is taken at uniform pressure, work after friction: where friction eats more than the
+	// bodies give, as much must be forced at least.
+	forced = max(forced, -work)
 	l.Drive = loss.DriveLoss(c.Effectiveness, work, forced) * f
 	l.SealFriction = loss.FrictionPower(c.SealFriction, w.geometry.sweptPiston, f)
 	dst.BrakePower = loss.ShaftWork(c.Effectiveness, work, forced)*f - l.SealFriction

@@ -4,9 +4,9 @@ import "math"
 
 // Tolerances of the periodic state. Each is a share, so that they mean the same for every engine.
 const (
-	tolBalance  = 2e-4 // heat from walls less work, over heat into the gas at the heater
+	tolBalance  = 2e-4 // heat from walls less work, over heat into the gas at the heater or four times the work, if less
 	tolProfile  = 5e-4 // largest difference of mean enthalpy flow between two sections of the matrix, over that heat
-	tolWork     = 2e-4 // change of work between cycles, over that heat
+	tolWork     = 2e-4 // change of work between cycles, over that heat or four times the work, if less
 	tolCoarse   = 2e-2 // balance and profile at which the coarse grid has done its part
 	tolPressure = 2e-4 // mean pressure over the one asked for, less one
 	tolWall     = 0.1  // change of a wall temperature between cycles [K]
@@ -105,8 +105,10 @@ func (s *Solver) attempt(dst *Result, path *Path, set Settings) {
 			lastWork = work
 			continue
 		}
-		done := math.Abs(balance) < tolBalance && profile < tolProfile &&
-			math.Abs(work-lastWork) < tolWork*scale &&
+		// A machine of low efficiency needs the work to a smaller share of the heat.
+		strict := min(1, 4*math.Abs(work)/scale+tolWork)
+		done := math.Abs(balance) < tolBalance*strict && profile < tolProfile &&
+			math.Abs(work-lastWork) < tolWork*scale*strict &&
 			math.Abs(mean/path.Mean-1) < tolPressure && moved < tolWall
 		lastWork = work
 		if done || cycle == set.MaxCycles {
@@ -157,6 +159,7 @@ func (s *Solver) begin(set Settings) {
 		s.flow[i] = 0
 		s.dT[i] = 0
 		s.metalDrift[i] = 0
+		s.conduct[i], s.axialFlow[i] = 0, 0
 		if c.Kind == Tube {
 			if hot == 0 {
 				hot = c.Wall
@@ -224,6 +227,7 @@ func (s *Solver) transport(first bool) {
 		mu, k := s.gas.Transport(t, 1/s.state.V)
 		s.viscosity[i] = mu
 		if c.FixedFilm > 0 {
+			s.conduct[i] = c.Conduct
 			continue
 		}
 		s.filmScale[i] = k * c.Film / c.Dh
