@@ -16,7 +16,7 @@ func mustLoad(t testing.TB, data []byte, sets ...string) *Study {
 
 func refuge(t testing.TB) []byte {
 	t.Helper()
-	data, err := os.ReadFile("examples/refuge-heat-and-power.yaml")
+	data, err := os.ReadFile("../testdata/studies/refuge-heat-and-power.yaml")
 	if err != nil {
 		t.Fatal(err)
 	}
