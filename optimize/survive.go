@@ -88,7 +88,7 @@ type relaxation struct {
 
 const (
 	relaxPercentile  = 0.2
-	relaxGenerations = 100
+	relaxGenerations = 40
 )
 
 func newRelaxation(members []*member, size int) relaxation {
