@@ -3,62 +3,77 @@ package optimize_test
 import (
 	"context"
 	"flag"
-	"fmt"
 	"os"
 	"slices"
-	"sync"
 	"testing"
+	"time"
 
 	"hotfront/optimize"
 	"hotfront/optimize/pareto"
 	tp "hotfront/optimize/testproblem"
 )
 
-var full = flag.Bool("full", false, "quality table over 11 seeds")
+// picked is the number of designs that stand for a front in the table.
+const picked = 100
 
-func TestX(t *testing.T) {
-	type row struct {
-		p      *tp.Problem
-		target float64
+// fronts runs a problem once and returns the shares of the ideal hypervolume that the picked designs and the
+// whole front reach.
+func fronts(t *testing.T, p *tp.Problem, evaluations int, seed uint64) (share, whole float64) {
+	t.Helper()
+	set := optimize.Settings{Evaluations: evaluations, Seed: seed, Workers: 1}
+	res, err := optimize.Run(context.Background(), p, set, nil, nil)
+	if err != nil {
+		t.Fatal(err)
 	}
-	rows := []row{{tp.ZDT1(), .994}, {tp.ZDT2(), .985}, {tp.ZDT3(), .988}, {tp.ZDT4(), .985}, {tp.ZDT6(), .985}, {tp.DTLZ2(), .936}, {tp.BNH(), .997}, {tp.SRN(), .995}, {tp.TNK(), .991}, {tp.OSY(), .985}, {tp.WeldedBeam(), .995}, {tp.DTLZ1(), 0}, {tp.C2DTLZ2(), 0}}
-	only := os.Getenv("ONLY")
-	for _, r := range rows {
-		if only != "" && only != r.p.Name {
-			continue
+	front := make([][]float64, len(res.Front))
+	for i, q := range res.Front {
+		front[i] = q.F
+	}
+	var chosen [][]float64
+	for _, i := range pareto.Choose(front, p.Ref, picked) {
+		chosen = append(chosen, front[i])
+	}
+	return pareto.Hypervolume(chosen, p.Ref) / p.Ideal, res.Hypervolume / p.Ideal
+}
+
+func TestMain(m *testing.M) {
+	flag.Bool("full", false, "quality table over 11 seeds instead of 3")
+	flag.Parse()
+	os.Exit(m.Run())
+}
+
+// TestQualityTable prints, for each problem, the median over the seeds of the share of the ideal hypervolume
+// that 100 designs picked from the front reach after 10,000 evaluations, and holds it against a floor. Three
+// seeds by default; go test -run TestQualityTable -v . -full runs 11.
+//
+// The floor lies a little below what 11 seeds gave when it was set; it is there to notice a loss of quality.
+// The problems below the line had no part in setting the driver's numbers.
+func TestQualityTable(t *testing.T) {
+	seeds := 3
+	if flag.Lookup("full").Value.String() == "true" {
+		seeds = 11
+	}
+	for _, row := range []struct {
+		problem *tp.Problem
+		floor   float64
+	}{
+		{tp.ZDT1(), 0.994}, {tp.ZDT2(), 0.985}, {tp.ZDT3(), 0.988}, {tp.ZDT4(), 0.80}, {tp.ZDT6(), 0.985},
+		{tp.DTLZ2(), 0.936}, {tp.BNH(), 0.996}, {tp.SRN(), 0.993}, {tp.TNK(), 0.991}, {tp.OSY(), 0.95},
+		{tp.WeldedBeam(), 0.98}, {tp.DTLZ1(), 0.30}, {tp.C2DTLZ2(), 0.995},
+		// ---
+		{tp.Valley(), 0.98}, {tp.Turned(), 0.98}, {tp.Needle(), 0.97}, {tp.Mixed(), 0.8},
+	} {
+		begin := time.Now()
+		share, whole := make([]float64, seeds), make([]float64, seeds)
+		for i := range seeds {
+			share[i], whole[i] = fronts(t, row.problem, 10_000, uint64(i+1))
 		}
-		n := 15
-		if *full {
-			n = 11
+		slices.Sort(share)
+		slices.Sort(whole)
+		t.Logf("%-9s median %.4f, least %.4f, most %.4f; whole front %.4f; %v a run", row.problem.Name,
+			share[seeds/2], share[0], share[seeds-1], whole[seeds/2], time.Since(begin)/time.Duration(seeds))
+		if !(share[seeds/2] >= row.floor) || share[seeds-1] > 1.0005 {
+			t.Errorf("%s: median share %.4f, floor %.4f; most %.4f", row.problem.Name, share[seeds/2], row.floor, share[seeds-1])
 		}
-		shares := make([]float64, n)
-		fronts := make([]float64, n)
-		var wg sync.WaitGroup
-		for i := range shares {
-			wg.Go(func() {
-				res, err := optimize.Run(context.Background(), r.p, optimize.Settings{Evaluations: 10000, Seed: uint64(i + 1)}, nil, nil)
-				if err != nil {
-					t.Fatal(err)
-				}
-				var pts [][]float64
-				for _, p := range res.Front {
-					pts = append(pts, p.F)
-				}
-				var sel [][]float64
-				for _, k := range pareto.Choose(pts, r.p.Ref, 100) {
-					sel = append(sel, pts[k])
-				}
-				shares[i] = pareto.Hypervolume(sel, r.p.Ref) / r.p.Ideal
-				fronts[i] = res.Hypervolume / r.p.Ideal
-			})
-		}
-		wg.Wait()
-		slices.Sort(shares)
-		slices.Sort(fronts)
-		if os.Getenv("SHORT") != "" {
-			fmt.Printf("%s %.4f/%.3f  ", r.p.Name, shares[n/2], shares[0])
-			continue
-		}
-		t.Logf("%-8s %.4f [%.3f] min %.4f max %.4f   whole %.4f ideal %g", r.p.Name, shares[n/2], r.target, shares[0], shares[n-1], fronts[n/2], r.p.Ideal)
 	}
 }
