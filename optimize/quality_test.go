@@ -44,12 +44,13 @@ func TestMain(m *testing.M) {
 
 // TestQualityTable prints, for each problem, the median over the seeds of the share of the ideal hypervolume
 // that 100 designs picked from the front reach after 10,000 evaluations, and holds it against a floor. Three
-// seeds by default; go test -run TestQualityTable -v . -full runs 11.
+// seeds by default, one under the race detector, which is too few to judge by;
+// go test -run TestQualityTable -v . -full runs 11.
 //
 // The floor lies a little below what 11 seeds gave when it was set; it is there to notice a loss of quality.
 // The problems below the line had no part in setting the driver's numbers.
 func TestQualityTable(t *testing.T) {
-	seeds := 3
+	seeds := defaultSeeds
 	if flag.Lookup("full").Value.String() == "true" {
 		seeds = 11
 	}
@@ -72,7 +73,7 @@ func TestQualityTable(t *testing.T) {
 		slices.Sort(whole)
 		t.Logf("%-9s median %.4f, least %.4f, most %.4f; whole front %.4f; %v a run", row.problem.Name,
 			share[seeds/2], share[0], share[seeds-1], whole[seeds/2], time.Since(begin)/time.Duration(seeds))
-		if !(share[seeds/2] >= row.floor) || share[seeds-1] > 1.0005 {
+		if seeds > 1 && !(share[seeds/2] >= row.floor) || share[seeds-1] > 1.0005 {
 			t.Errorf("%s: median share %.4f, floor %.4f; most %.4f", row.problem.Name, share[seeds/2], row.floor, share[seeds-1])
 		}
 	}

@@ -226,7 +226,7 @@ func (s *session) account(first int) {
 		s.stale = s.stale || taken
 	}
 	if s.stale {
-		s.progress.Hypervolume = pareto.Hypervolume(s.archive.Points(), s.ref)
+		s.progress.Hypervolume = s.archive.Hypervolume(s.ref)
 		s.stale = false
 	}
 	s.progress.Evaluations = len(s.points)

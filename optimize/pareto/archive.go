@@ -10,7 +10,8 @@ import (
 // additions. The zero value is not usable; see NewArchive.
 type Archive struct {
 	aims   int
-	points []Tagged // ascending by aim 0, then by the further aims
+	points []*Tagged // ascending by aim 0, then by the further aims
+	sweep  sweep
 }
 
 // Tagged is a point with a number of the caller's.
@@ -29,15 +30,18 @@ func (a *Archive) Len() int { return len(a.points) }
 
 // At is the i-th point in ascending order of aim 0, then of the further aims. The caller must not change
 // its numbers.
-func (a *Archive) At(i int) Tagged { return a.points[i] }
+func (a *Archive) At(i int) Tagged { return *a.points[i] }
 
-// Points lists the points in that order.
-func (a *Archive) Points() [][]float64 {
-	out := make([][]float64, len(a.points))
-	for i, p := range a.points {
-		out[i] = p.F
+// Hypervolume is that of the points held (see the function of this name), without the sorting.
+func (a *Archive) Hypervolume(ref []float64) float64 {
+	order := a.sweep.order[:0]
+	for _, p := range a.points {
+		if below(p.F, ref) {
+			order = append(order, p.F)
+		}
 	}
-	return out
+	a.sweep.order = order
+	return a.sweep.sorted(ref)
 }
 
 // Add offers a point and reports whether the archive took it; points that it dominates leave. The archive
@@ -82,6 +86,6 @@ func (a *Archive) Add(f []float64, tag int) (bool, error) {
 		kept++
 	}
 	clear(a.points[kept:])
-	a.points = slices.Insert(a.points[:kept], at, Tagged{F: f, Tag: tag})
+	a.points = slices.Insert(a.points[:kept], at, &Tagged{F: f, Tag: tag})
 	return true, nil
 }

@@ -15,7 +15,7 @@ import (
 // a small factor). The unit is the product of the units of the aims. The order of the points does not
 // matter but for rounding, 1e-15 per point.
 //
-// Source: the sweep along the last aim follows C. M. Fonseca, L. Paquete, M. Lopez-Ibanez, An improved
+// Source: the sweep along one aim follows C. M. Fonseca, L. Paquete, M. Lopez-Ibanez, An improved
 // dimension-sweep algorithm for the hypervolume indicator, IEEE CEC 2006, 1157-1163, section III (from
 // memory); a sorted slice takes the place of its tree.
 func Hypervolume(points [][]float64, ref []float64) float64 {
@@ -26,7 +26,7 @@ func Hypervolume(points [][]float64, ref []float64) float64 {
 // sweep holds the workspace of repeated volumes.
 type sweep struct {
 	order [][]float64
-	stair [][2]float64 // aims 0 and 1 of the points passed so far: 0 ascends, 1 descends
+	stair [][2]float64 // aims 1 and 2 of the points passed so far: the first ascends, the second descends
 }
 
 func (s *sweep) volume(points [][]float64, ref []float64) float64 {
@@ -36,18 +36,19 @@ func (s *sweep) volume(points [][]float64, ref []float64) float64 {
 			s.order = append(s.order, p)
 		}
 	}
+	slices.SortFunc(s.order, slices.Compare)
+	return s.sorted(ref)
+}
+
+// sorted is the volume of s.order, which ascends by aim 0, then by the further aims, and lies below ref.
+func (s *sweep) sorted(ref []float64) float64 {
 	if len(s.order) == 0 {
 		return 0
 	}
 	switch len(ref) {
 	case 1:
-		best := s.order[0][0]
-		for _, p := range s.order {
-			best = min(best, p[0])
-		}
-		return ref[0] - best
+		return ref[0] - s.order[0][0]
 	case 2:
-		slices.SortFunc(s.order, slices.Compare)
 		area, top := 0.0, ref[1]
 		for _, p := range s.order {
 			if p[1] < top {
@@ -57,25 +58,22 @@ func (s *sweep) volume(points [][]float64, ref []float64) float64 {
 		}
 		return area
 	case 3:
-		slices.SortFunc(s.order, func(a, b []float64) int {
-			return cmp.Or(cmp.Compare(a[2], b[2]), cmp.Compare(a[0], b[0]), cmp.Compare(a[1], b[1]))
-		})
 		s.stair = s.stair[:0]
-		volume, area, level := 0.0, 0.0, s.order[0][2]
+		volume, area, level := 0.0, 0.0, s.order[0][0]
 		for _, p := range s.order {
-			volume += area * (p[2] - level)
-			level = p[2]
-			area += s.step(p[0], p[1], ref)
+			volume += area * (p[0] - level)
+			level = p[0]
+			area += s.step(p[1], p[2], ref[1], ref[2])
 		}
-		return volume + area*(ref[2]-level)
+		return volume + area*(ref[0]-level)
 	}
 	panic("pareto: hypervolume of more than three aims")
 }
 
-// step puts the point (x, y) into the staircase and returns the area it adds.
-func (s *sweep) step(x, y float64, ref []float64) float64 {
+// step puts the point (x, y) into the staircase below (right, top) and returns the area it adds.
+func (s *sweep) step(x, y, right, top float64) float64 {
 	at, found := slices.BinarySearchFunc(s.stair, x, func(p [2]float64, x float64) int { return cmp.Compare(p[0], x) })
-	top := ref[1] // height of the staircase just right of x
+	// From here on, top is the height of the staircase just right of x.
 	if found {
 		top = s.stair[at][1]
 	} else if at > 0 {
@@ -93,7 +91,6 @@ func (s *sweep) step(x, y float64, ref []float64) float64 {
 		left, top = s.stair[end][0], s.stair[end][1]
 		end++
 	}
-	right := ref[0]
 	if end < len(s.stair) {
 		right = s.stair[end][0]
 	}

@@ -153,7 +153,11 @@ func TestArchive(t *testing.T) {
 			}
 		}
 		slices.SortFunc(want, func(a, b Tagged) int { return slices.Compare(a.F, b.F) })
+		ref := []float64{4, 3, 4}[:aims]
 		for _, a := range []*Archive{forward, shuffled} {
+			if got, want := a.Hypervolume(ref), Hypervolume(points, ref); got != want {
+				t.Fatalf("hypervolume %v, want %v", got, want)
+			}
 			if a.Len() != len(want) {
 				t.Fatalf("%d points, want %d", a.Len(), len(want))
 			}

@@ -1,0 +1,6 @@
+//go:build !race
+
+package optimize_test
+
+// defaultSeeds of the quality table.
+const defaultSeeds = 3
