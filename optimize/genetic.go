@@ -93,6 +93,7 @@ func runGenetic(ctx context.Context, s *session, set Settings) error {
 		session: s,
 		ask:     func(xs [][]float64, seqs []int) error { return s.evaluate(ctx, xs, seqs) },
 		size:    size,
+		shelter: newShelter(s.space, size),
 		vary:    newVariation(s.space, rand.New(rand.NewPCG(set.Seed, streamVary))),
 	}
 	members, err := g.begin(rand.New(rand.NewPCG(set.Seed, streamStart)))
@@ -124,6 +125,7 @@ type generation struct {
 	size    int
 	vary    *variation
 	relax   relaxation
+	shelter shelter
 	scan    scanner
 	barren  int // generations without a new design, up to now
 }
@@ -148,7 +150,7 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 		return err
 	}
 	all := append(members, children...)
-	kept := survive(all, g.size, g.relax.level(len(g.session.points)))
+	kept := g.shelter.survive(all, g.size, g.relax.level(len(g.session.points)), len(g.session.points))
 	alive := make([]bool, len(all))
 	members = make([]*member, len(kept))
 	for k, i := range kept {
