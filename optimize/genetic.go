@@ -15,7 +15,7 @@ import (
 const (
 	defaultPopulation = 32
 	// With limits and few variables a smaller population loses corners of the feasible front.
-	limitedPopulation = 60
+	limitedPopulation = 80
 	limitedDims       = 8
 
 	neighbours  = 4  // one in so many of the first population is a neighbour of a start design

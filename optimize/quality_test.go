@@ -48,7 +48,7 @@ func TestMain(m *testing.M) {
 // go test -run TestQualityTable -v . -full runs 11.
 //
 // The floor lies a little below what 11 seeds gave when it was set; it is there to notice a loss of quality.
-// The problems below the line had no part in setting the driver's numbers.
+// The driver's numbers were set on the problems above the line; those below were only watched.
 func TestQualityTable(t *testing.T) {
 	seeds := defaultSeeds
 	if flag.Lookup("full").Value.String() == "true" {
@@ -60,8 +60,8 @@ func TestQualityTable(t *testing.T) {
 	}{
 		{tp.ZDT1(), 0.994}, {tp.ZDT2(), 0.985}, {tp.ZDT3(), 0.988}, {tp.ZDT4(), 0.80}, {tp.ZDT6(), 0.985},
 		{tp.DTLZ2(), 0.936}, {tp.BNH(), 0.996}, {tp.SRN(), 0.993}, {tp.TNK(), 0.991}, {tp.OSY(), 0.95},
-		{tp.WeldedBeam(), 0.98}, {tp.DTLZ1(), 0.30}, {tp.C2DTLZ2(), 0.995},
-		// ---
+		{tp.WeldedBeam(), 0.98}, // ---
+		{tp.DTLZ1(), 0.30}, {tp.C2DTLZ2(), 0.995},
 		{tp.Valley(), 0.98}, {tp.Turned(), 0.98}, {tp.Needle(), 0.97}, {tp.Mixed(), 0.99},
 	} {
 		begin := time.Now()

@@ -24,7 +24,7 @@ const (
 	exchangeOnly = 0.5  // share of crossovers that swap values without blending them
 	mutateEta    = 20.0 // distribution index of the mutation
 
-	sureExchange = 0.3  // share of children made by exchange whatever its credit
+	sureExchange = 0.5  // share of children made by exchange whatever its credit
 	endShare     = 0.15 // share of parents that are the best design in one aim
 	opFloor      = 0.02 // added to every operator's credit, so that none dies out
 	opRate       = 0.02 // weight of one child in its operator's credit

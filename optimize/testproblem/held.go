@@ -6,7 +6,7 @@ import (
 	"hotfront/optimize"
 )
 
-// Problems that the drivers' numbers were not set on.
+// Problems that the drivers' numbers were not set on, but for a look that they do no harm.
 
 // Valley has its best designs on a curved line through all variables at once: no variable can be set on its
 // own. 8 variables.

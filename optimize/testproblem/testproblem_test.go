@@ -57,7 +57,7 @@ func TestKnownDesigns(t *testing.T) {
 		{BNH(), []float64{3, 3}, []float64{72, 8}},
 		{SRN(), []float64{-2.5, 2.5}, []float64{24.5, -24.75}},
 		{TNK(), []float64{math.Sqrt(0.55), math.Sqrt(0.55)}, []float64{math.Sqrt(0.55), math.Sqrt(0.55)}}, // cos(4 pi) = 1
-		{OSY(), []float64{5, 1, 1, 0, 5, 0}, []float64{-(225 + 1 + 16 + 16), 52}}, // four limits press
+		{OSY(), []float64{5, 1, 1, 0, 5, 0}, []float64{-(225 + 1 + 16 + 16), 52}},                         // four limits press
 		{Rosenbrock(3), []float64{1, 1, 1}, []float64{0}},
 		{Corner(), []float64{-0.28, -0.96}, []float64{-2.2}},
 		{Turned(), halves(10, 0.25, 0.3, 0.3, 0.3, 0.3, 0.3, 0.3, 0.3, 0.3, 0.3), []float64{0.25, 0.5}},
