@@ -17,6 +17,9 @@ const (
 	// With limits and few variables a smaller population loses corners of the feasible front.
 	limitedPopulation = 80
 	limitedDims       = 8
+	// In a small space of whole numbers a large population is mostly its first sample.
+	leastPopulation  = 8
+	designsPerMember = 20
 
 	neighbours  = 4  // one in so many of the first population is a neighbour of a start design
 	retries     = 8  // attempts to vary a child that was known before
@@ -88,6 +91,7 @@ func runGenetic(ctx context.Context, s *session, set Settings) error {
 		if s.problem.Limits() > 0 && s.space.dims() <= limitedDims {
 			size = limitedPopulation
 		}
+		size = int(min(float64(size), max(leastPopulation, s.space.size/designsPerMember)))
 	}
 	g := &generation{
 		session: s,
