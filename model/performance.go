@@ -44,7 +44,7 @@ type Performance struct {
 	HeaterReynolds          float64 // cycle-mean Reynolds number [-]
 	HeaterFlowLoss          float64 // [W]
 
-	RegeneratorEffectiveness float64 // heat returned over heat stored and returned [-]
+	RegeneratorEffectiveness float64 // heat returned over heat stored and returned; counts the lag of the film, not the swing of a light matrix [-]
 	RegeneratorHeat          float64 // heat put into the matrix by the hot blow [W]
 	RegeneratorPressureHeat  float64 // net enthalpy flow through the matrix that goes with pressure, not with the film's lag; either sign [W]
 	RegeneratorNTU           float64 // of one blow, cycle-mean film [-]

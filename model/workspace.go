@@ -19,7 +19,7 @@ type Grid struct {
 
 // ProductionGrid is the grid every command uses; its error against finer grids is tested.
 func ProductionGrid() Grid {
-	return Grid{Heater: 6, Regenerator: 12, Cooler: 4, Steps: 60, CoarseSteps: 24}
+	return Grid{Heater: 6, Regenerator: 12, Cooler: 6, Steps: 60, CoarseSteps: 24}
 }
 
 // Workspace is all the memory an evaluation needs. It belongs to one goroutine at a time.

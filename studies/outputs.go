@@ -85,7 +85,7 @@ func Outputs() []Output {
 		{"heater.reynolds", "cycle-mean Reynolds number in the heater tubes", Number, "-", func(p *p) *float64 { return &p.HeaterReynolds }},
 		{"heater.flow_loss", "power lost to flow friction in the heater", Power, "W", func(p *p) *float64 { return &p.HeaterFlowLoss }},
 
-		{"regenerator.effectiveness", "heat returned over heat stored and returned", Number, "-", func(p *p) *float64 { return &p.RegeneratorEffectiveness }},
+		{"regenerator.effectiveness", "heat returned over heat stored and returned; counts the lag of the film, not the swing of a light matrix", Number, "-", func(p *p) *float64 { return &p.RegeneratorEffectiveness }},
 		{"regenerator.heat", "heat put into the matrix by the hot blow", Power, "kW", func(p *p) *float64 { return &p.RegeneratorHeat }},
 		{"regenerator.pressure_heat", "net enthalpy flow through the matrix that goes with pressure, not with the lag of the film; either sign", Power, "W", func(p *p) *float64 { return &p.RegeneratorPressureHeat }},
 		{"regenerator.ntu", "number of transfer units of one blow, cycle-mean film", Number, "-", func(p *p) *float64 { return &p.RegeneratorNTU }},

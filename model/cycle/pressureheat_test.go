@@ -9,16 +9,16 @@ import (
 
 // TestPressureHeat explains why the net flow of enthalpy through the matrix falls below what the lag of
 // the gas behind the metal carries, and may turn towards the hot end: work flows from the cold to the
-// hot end of a regenerator of an engine, so the mass flow M towards the cold end and the swing p' of the pressure are
-// in opposition, <M p'> < 0, and two things carry enthalpy in step with the pressure:
+// hot end of an engine's regenerator, so that the mass flow M towards the cold end and the swing p' of the
+// pressure stand against each other, <M p'> < 0, and two things carry enthalpy in step with the pressure:
 //
-//	the real gas     h depends on p:                     <M p'> dh/dp
-//	the light matrix V p' of compression heat goes into the metal, which warms by -T v_T/v V p'/C, and the
-//	                 gas that passes with it:            <M p'> cp (-v_T T/v) V/C = -<M p'> cp V/C in a perfect gas
+//	real gas      its enthalpy depends on pressure:                                 <M p'> dh/dp
+//	light matrix  the metal takes up the heat of compression of the gas in its
+//	              pores and warms by (T v_T/v) V p'/C; the gas that passes follows: <M p'> cp (T v_T/v) V/C
 //
-// The second has the sign of the first: gas under pressure is cooled by expansion of what follows. Switching each
-// on alone (perfect gas and heavy matrix, then real gas, then light matrix) must change the flow by that
-// amount. Both move energy reversibly; the dynamic solver gives the same heats (TestDynamic).
+// Switched on alone, over a perfect gas in a heavy matrix, each must change the flow by that amount, to
+// first order in the swings (15 and 25 % are allowed). Both move energy reversibly, so neither is a loss or a
+// defect; the dynamic solver gives the same heats (TestDynamic).
 func TestPressureHeat(t *testing.T) {
 	solve := func(m machine) (rest, realGas, light float64) {
 		p := m.path(grid{6, 12, 4, 120, 0})

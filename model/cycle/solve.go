@@ -14,9 +14,11 @@ const (
 
 // Result is the periodic state, in joules a cycle and kelvin.
 type Result struct {
-	Cycles    int
-	Converged bool
-	Diverged  bool
+	Cycles     int // all cycles run
+	FineCycles int // of these, on the fine grid
+	Steps      int // time steps of all cycles together
+	Converged  bool
+	Diverged   bool
 
 	PressureMean, PressureMax, PressureMin float64           // [Pa]
 	Mass                                   float64           // gas in the path [kg]
@@ -58,10 +60,12 @@ func (s *Solver) Solve(dst *Result, path *Path, set Settings) {
 	if dst.Converged {
 		return
 	}
-	spent := dst.Cycles
+	first := *dst
 	set.Newton, set.Depth, set.FineOnly, set.MaxCycles = set.Newton+2, min(set.Depth, 4), true, 2*set.MaxCycles
 	s.attempt(dst, path, set)
-	dst.Cycles += spent
+	dst.Cycles += first.Cycles
+	dst.FineCycles += first.FineCycles
+	dst.Steps += first.Steps
 }
 
 func (s *Solver) attempt(dst *Result, path *Path, set Settings) {
@@ -83,6 +87,10 @@ func (s *Solver) attempt(dst *Result, path *Path, set Settings) {
 		if !s.run() {
 			dst.Cycles, dst.Diverged = cycle, true
 			return
+		}
+		dst.Steps += s.move.Steps
+		if s.move == &path.Fine {
+			dst.FineCycles++
 		}
 		work := s.sums.work[0] + s.sums.work[1]
 		hot := s.heatOf(PartHeater)
@@ -295,6 +303,9 @@ func (s *Solver) collect(dst *Result) {
 		dst.Heat[i] = s.sums.heat[i]
 		dst.Temperature[i] = s.sums.temperature[i] / path.Period
 		dst.Wall[i] = s.wall[i]
+		if s.kind[i] == Matrix {
+			dst.Wall[i] = s.sums.metal[i] / path.Period
+		}
 		dst.FilmMean[i] = s.sums.film[i] / path.Period
 		dst.FlowMean[i] = s.sums.flowAbs[i] / path.Period
 		dst.Enthalpy[i] = s.sums.enthalpy[i]
