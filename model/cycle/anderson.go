@@ -19,7 +19,11 @@ type mixing struct {
 	dF, dG      [maxDepth][maxStates]float64 // differences, newest at next-1
 	next        int
 	fresh       bool
+	cycles      int // maps so far
 }
+
+// plainCycles are run before acceleration sets in: the first changes are large and teach it nothing.
+const plainCycles = 2
 
 const temperatureScale = 300 // [K]
 
@@ -27,6 +31,7 @@ func (m *mixing) reset(depth int) {
 	m.depth = min(depth, maxDepth)
 	m.held, m.next = 0, 0
 	m.fresh = true
+	m.cycles = 0
 }
 
 // restart keeps what was learnt of the map but takes no difference across a change of it.
@@ -37,7 +42,8 @@ func (m *mixing) push(s *Solver) { m.n = s.pack(&m.x) }
 
 // mix takes the state after a cycle and replaces it by the accelerated one.
 func (m *mixing) mix(s *Solver) {
-	if m.depth == 0 {
+	m.cycles++
+	if m.depth == 0 || m.cycles <= plainCycles {
 		return
 	}
 	n := s.pack(&m.g)
@@ -80,7 +86,7 @@ func (m *mixing) leastSquares(gamma *[maxDepth]float64) {
 		a[i][k] = dot(&m.dF[i], &m.f, m.n)
 	}
 	for i := range k {
-		a[i][i] *= 1 + 1e-10
+		a[i][i] *= 1 + 1e-6
 	}
 	for i := range k { // Gauss elimination, symmetric positive definite: no pivoting needed
 		if a[i][i] <= 0 {

@@ -1,7 +1,9 @@
 package cycle
 
-// film sets the film conductances from the predicted flows, with the matrix temperature of the
-// stage eliminated:
+import "math"
+
+// film sets the film conductances of a step from the flows at its start, with the matrix temperature of
+// the stage eliminated:
 //
 //	Tw = Tw* + a (-Q)/C,  Q = UA (Tw - T)   gives   Q = UAe (Tw* - T),  UAe = UA C/(C + a UA).
 func (s *Solver) film(a float64) {
@@ -65,16 +67,19 @@ func (s *Solver) run() bool {
 				s.metal0[i] = s.wall[i] + a*s.metalDrift[i]
 			}
 		}
+		s.film(a)
 		if !s.newtonSteps(a, k) {
 			return false
 		}
-		s.rates(a, b, k)
+		s.rates(b, k)
+		s.films(dt)
 		// Second stage, at (n + 1) dt; it starts from the first stage's rates.
 		for i := range s.n {
 			s.mass0[i] = s.mass[i] + b*s.massRate[i]
 			s.energy0[i] = s.energy[i] + b*s.energyRate[i]
 			if s.kind[i] == Matrix {
 				s.metal0[i] = s.wall[i] + b*s.metalRate[i] + a*s.metalDrift[i]
+				s.wall0[i] = s.metal0[i]
 			}
 		}
 		if !s.newtonSteps(a, k+1) {
@@ -83,7 +88,7 @@ func (s *Solver) run() bool {
 		if n == move.Steps-1 && !s.settle(a, k+1) {
 			return false
 		}
-		s.rates(a, a, k+1)
+		s.rates(a, k+1)
 		for i := range s.n {
 			s.mass[i] = s.mass0[i] + a*s.massRate[i]
 			s.energy[i] = s.energy0[i] + a*s.energyRate[i]
@@ -111,7 +116,6 @@ func (s *Solver) settle(a float64, k int) bool {
 }
 
 func (s *Solver) newtonSteps(a float64, k int) bool {
-	s.film(a)
 	for range s.newton {
 		if !s.stage(a, s.move.Ve[k], s.move.DVe[k], s.move.Vc[k], s.move.DVc[k]) {
 			return false
@@ -120,9 +124,27 @@ func (s *Solver) newtonSteps(a float64, k int) bool {
 	return true
 }
 
+// films adds to the integrals of the cycle that only describe it and steer the iteration, once a step.
+func (s *Solver) films(dt float64) {
+	flowIn := 0.0
+	for i := range s.n {
+		flowOut := 0.0
+		if i < s.n-1 {
+			flowOut = s.flow[i]
+			s.sums.flowAbs[i] += dt * math.Abs(flowOut)
+		}
+		s.sums.film[i] += dt * s.ua[i]
+		if s.kind[i] == Matrix {
+			c := s.cp[i] * 0.5 * (flowIn + flowOut)
+			s.sums.blow[i] += dt * c * c / s.ua[i]
+		}
+		flowIn = flowOut
+	}
+}
+
 // rates works out the rates of mass, energy and matrix temperature at the stage just solved, adds
 // them with the weight w [s] to the integrals of the cycle and keeps the trace.
-func (s *Solver) rates(a, w float64, k int) {
+func (s *Solver) rates(w float64, k int) {
 	path := s.path
 	last := s.n - 1
 	p := s.p
@@ -134,25 +156,17 @@ func (s *Solver) rates(a, w float64, k int) {
 			rise := s.wLeft[i]*s.dT[i] + s.wRight[i]*s.dT[i+1]
 			energyOut = flowOut * (s.hFace[i] + s.cpFace[i]*rise)
 			s.sums.enthalpy[i] += w * energyOut
-			if flowOut >= 0 {
-				s.sums.flowAbs[i] += w * flowOut
-			} else {
-				s.sums.flowAbs[i] -= w * flowOut
-			}
 		}
 		q := s.uae[i] * (s.wall0[i] - s.t[i])
 		s.massRate[i] = flowIn - flowOut
 		s.energyRate[i] = energyIn - energyOut + q
 		s.sums.heat[i] += w * q
 		s.sums.temperature[i] += w * s.t[i]
-		s.sums.film[i] += w * s.ua[i]
 		if s.kind[i] == Matrix {
 			s.metalRate[i] = s.metalDrift[i]
 			if !path.FixedRun {
 				s.metalRate[i] -= q / path.Cells[i].Capacity
 			}
-			c := s.cp[i] * 0.5 * (flowIn + flowOut)
-			s.sums.blow[i] += w * c * c / s.ua[i]
 			if q < 0 {
 				s.sums.heatIn[i] -= w * q
 			}

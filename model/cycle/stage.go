@@ -9,13 +9,14 @@ import "math"
 //	ve, vc volumes of the spaces at the stage [m3]; dve, dvc their rates [m3/s]
 //
 // The right-hand sides s.mass0, s.energy0 and s.metal0 hold what the stage starts from. Elimination
-// runs from the expansion space to the compression space: with the cells before it eliminated, the
-// flow into a cell and the temperature before it are linear in the cell's own temperature and in the
-// pressure,
+// runs from both closed ends to a cell in the middle, two chains that the processor works on side by
+// side. With the cells of a chain eliminated, the flow into the next cell and the temperature before it
+// are linear in that cell's temperature and in the pressure,
 //
-//	dM- = A + B dp + S dT,   dT(i-1) = A' + B' dp + S' dT,
+//	dM = A + B dp + S dT,   dT(before) = A1 + B1 dp + S1 dT,
 //
-// and the closed end at the compression space gives dp. Reports false when the result is not physical.
+// and the two balances of the middle cell give its temperature and the pressure. Reports false when
+// the result is not physical.
 func (s *Solver) stage(a, ve, dve, vc, dvc float64) bool {
 	n := s.n
 	p := s.p
@@ -23,71 +24,105 @@ func (s *Solver) stage(a, ve, dve, vc, dvc float64) bool {
 	s.properties(p)
 	s.faces()
 
-	var (
-		A, B, S    float64 // flow into the cell
-		A1, B1, S1 float64 // temperature of the cell before
-		flowIn     float64
-		hIn, cIn   float64 // enthalpy at the face before; flow x cp there
-		wLIn, wRIn float64
-		inva       = 1 / a
-	)
-	for i := range n {
-		dv := 0.0
-		if i == 0 {
-			dv = dve
-		} else if i == n-1 {
-			dv = dvc
+	mid := n / 2
+	left, right := chain{sign: 1}, chain{sign: -1}
+	dv := dve
+	for i := range mid {
+		s.eliminate(&left, i, i, a, dv)
+		if k := n - 1 - i; k > mid {
+			if i == 0 {
+				dv = dvc
+			}
+			s.eliminate(&right, k, k-1, a, dv)
 		}
-		m, h, cp := s.m[i], s.h[i], s.cp[i]
-		ua, tw := s.uae[i], s.wall0[i]
-		vol := s.volume[i]
-		var flowOut, hOut, cOut, wL, wR float64
-		if i < n-1 {
-			flowOut, hOut, wL, wR = s.flow[i], s.hFace[i], s.wLeft[i], s.wRight[i]
-			cOut = flowOut * s.cpFace[i]
-		}
-		Rm := s.mass0[i] - m - a*(flowOut-flowIn)
-		Ru := s.energy0[i] - (m*h - p*vol) - a*(flowOut*hOut-flowIn*hIn-ua*(tw-s.t[i])+p*dv)
-
-		dhOut, dhIn := hOut-h, hIn-h
-		if i == n-1 {
-			dhOut = 0
-		}
-		if i == 0 {
-			dhIn = 0
-		}
-		D := s.mT[i]*inva - S
-		e0 := Rm*inva + A
-		e1 := B - s.mp[i]*inva
-		X := m*cp + a*(ua-dhOut*D-dhIn*S+cOut*wL-cIn*(wRIn+wLIn*S1))
-		Y := a * cOut * wR
-		Z := Ru - h*Rm + a*(dhIn*A-dhOut*e0+cIn*wLIn*A1)
-		P := vol - m*s.hp[i] - a*dv + a*(dhIn*B-dhOut*e1+cIn*wLIn*B1)
-		invX := 1 / X
-		A1, B1, S1 = Z*invX, P*invX, -Y*invX
-		A, B, S = e0-D*A1, e1-D*B1, -D*S1
-		s.elA1[i], s.elB1[i], s.elS1[i] = A1, B1, S1
-		s.elA[i], s.elB[i], s.elS[i] = A, B, S
-		flowIn, hIn, cIn, wLIn, wRIn = flowOut, hOut, cOut, wL, wR
+		dv = 0
 	}
-	dp := -A / B
+	if mid == n-1 {
+		dv = dvc
+	}
+	dT, dp := s.middle(&left, &right, mid, a, dv)
 	if !(math.Abs(dp) < 0.9*p) {
 		return false
 	}
-	dT := 0.0
-	for i := n - 1; i >= 0; i-- {
-		if i < n-1 {
-			s.flow[i] += s.elA[i] + s.elB[i]*dp + s.elS[i]*dT
-		}
-		dT = s.elA1[i] + s.elB1[i]*dp + s.elS1[i]*dT
-		t := s.t[i] + dT
-		if !(t > minTemperature && t < maxTemperature) {
-			return false
-		}
-		s.t[i], s.dT[i] = t, dT
+	s.t[mid] += dT
+	s.dT[mid] = dT
+	ok := s.t[mid] > minTemperature && s.t[mid] < maxTemperature
+	d := dT
+	for i := mid - 1; i >= 0; i-- {
+		s.flow[i] += s.elA[i] + s.elB[i]*dp + s.elS[i]*d
+		d = s.elA1[i] + s.elB1[i]*dp + s.elS1[i]*d
+		s.dT[i] = d
+		s.t[i] += d
+		ok = ok && s.t[i] > minTemperature && s.t[i] < maxTemperature
+	}
+	d = dT
+	for i := mid + 1; i < n; i++ {
+		s.flow[i-1] -= s.elA[i] + s.elB[i]*dp + s.elS[i]*d
+		d = s.elA1[i] + s.elB1[i]*dp + s.elS1[i]*d
+		s.dT[i] = d
+		s.t[i] += d
+		ok = ok && s.t[i] > minTemperature && s.t[i] < maxTemperature
 	}
 	s.p = p + dp
-	return true
+	return ok
+}
+
+// chain is where an elimination stands. Its flows count positive towards the middle.
+type chain struct {
+	sign       float64 // of its flows against those of s.flow
+	A, B, S    float64 // flow into the next cell
+	A1, B1, S1 float64 // temperature of the last cell
+	flow, h, c float64 // flow into the next cell, its enthalpy, and the flow times cp
+	wLast      float64 // weight of the last cell in the face's temperature
+	wNext      float64 // weight of the next
+}
+
+// eliminate takes cell i, whose face towards the middle has the given index, into the chain. dv is the
+// rate of its volume [m3/s].
+func (s *Solver) eliminate(x *chain, i, face int, a, dv float64) {
+	m, h, vol := s.m[i], s.h[i], s.volume[i]
+	ua := s.uae[i]
+	flow, hOut := x.sign*s.flow[face], s.hFace[face]
+	c := flow * s.cpFace[face]
+	wThis, wNext := s.wLeft[face], s.wRight[face]
+	if x.sign < 0 {
+		wThis, wNext = wNext, wThis
+	}
+	inva := 1 / a
+	Rm := s.mass0[i] - m - a*(flow-x.flow)
+	Ru := s.energy0[i] - (m*h - s.p*vol) - a*(flow*hOut-x.flow*x.h-ua*(s.wall0[i]-s.t[i])+s.p*dv)
+	dhOut, dhIn := hOut-h, x.h-h
+	D := s.mT[i]*inva - x.S
+	e0 := Rm*inva + x.A
+	e1 := x.B - s.mp[i]*inva
+	cLast := x.c * x.wLast
+	X := m*s.cp[i] + a*(ua-dhOut*D-dhIn*x.S+c*wThis-x.c*x.wNext-cLast*x.S1)
+	Z := Ru - h*Rm + a*(dhIn*x.A-dhOut*e0+cLast*x.A1)
+	P := vol - m*s.hp[i] - a*dv + a*(dhIn*x.B-dhOut*e1+cLast*x.B1)
+	inv := 1 / X
+	x.A1, x.B1, x.S1 = Z*inv, P*inv, -a*c*wNext*inv
+	x.A, x.B, x.S = e0-D*x.A1, e1-D*x.B1, -D*x.S1
+	x.flow, x.h, x.c, x.wLast, x.wNext = flow, hOut, c, wThis, wNext
+	s.elA1[i], s.elB1[i], s.elS1[i] = x.A1, x.B1, x.S1
+	s.elA[i], s.elB[i], s.elS[i] = x.A, x.B, x.S
+}
+
+// middle solves the two balances of cell i, into which both chains flow, for its change of temperature
+// and the change of pressure.
+func (s *Solver) middle(l, r *chain, i int, a, dv float64) (dT, dp float64) {
+	m, h, vol := s.m[i], s.h[i], s.volume[i]
+	ua := s.uae[i]
+	inva := 1 / a
+	Rm := s.mass0[i] - m + a*(l.flow+r.flow)
+	Ru := s.energy0[i] - (m*h - s.p*vol) + a*(l.flow*l.h+r.flow*r.h+ua*(s.wall0[i]-s.t[i])-s.p*dv)
+	dl, dr := l.h-h, r.h-h
+	cl, cr := l.c*l.wLast, r.c*r.wLast
+	X := m*s.cp[i] + a*(ua-dl*l.S-dr*r.S-l.c*l.wNext-r.c*r.wNext-cl*l.S1-cr*r.S1)
+	Z := Ru - h*Rm + a*(dl*l.A+dr*r.A+cl*l.A1+cr*r.A1)
+	P := vol - m*s.hp[i] - a*dv + a*(dl*l.B+dr*r.B+cl*l.B1+cr*r.B1)
+	D := s.mT[i]*inva - l.S - r.S
+	dp = (Rm*inva + l.A + r.A - D*Z/X) / (s.mp[i]*inva - l.B - r.B + D*P/X)
+	return (Z + P*dp) / X, dp
 }
 
 // The range outside which a state is taken for a failure of the solution, not of the engine [K].
