@@ -1,0 +1,83 @@
+package main
+
+import (
+	"fmt"
+	"io"
+	"log/slog"
+	"os"
+	"time"
+
+	"github.com/lmittmann/tint"
+	"golang.org/x/term"
+
+	"hotfront/cmd/internal/report"
+	"hotfront/optimize"
+	"hotfront/studies"
+)
+
+// progress tells how a search gets on: one line rewritten in place on a terminal, a line of log every
+// ten seconds elsewhere.
+type progress struct {
+	w        io.Writer
+	log      *slog.Logger
+	terminal bool
+	problem  *studies.Problem
+	budget   int
+	start    time.Time
+	last     time.Time
+	first    int // designs recalled before the first was evaluated
+}
+
+func newProgress(w io.Writer, p *studies.Problem, budget int) *progress {
+	now := time.Now()
+	pr := &progress{w: w, problem: p, budget: budget, start: now, last: now}
+	if f, ok := w.(*os.File); ok {
+		pr.terminal = term.IsTerminal(int(f.Fd()))
+	}
+	pr.log = logger(w, pr.terminal)
+	return pr
+}
+
+func logger(w io.Writer, terminal bool) *slog.Logger {
+	if terminal {
+		return slog.New(tint.NewHandler(w, &tint.Options{TimeFormat: time.TimeOnly, NoColor: os.Getenv("NO_COLOR") != ""}))
+	}
+	return slog.New(slog.NewTextHandler(w, nil))
+}
+
+// observe is called after every batch.
+func (pr *progress) observe(s optimize.Progress) {
+	now := time.Now()
+	pause := 10 * time.Second
+	if pr.terminal {
+		pause = 200 * time.Millisecond
+	}
+	if s.Recalled == s.Evaluations {
+		pr.first, pr.start = s.Recalled, now
+	}
+	if now.Sub(pr.last) < pause {
+		return
+	}
+	pr.last = now
+	rate := float64(s.Evaluations-pr.first) / max(now.Sub(pr.start).Seconds(), 1e-9)
+	left := "-"
+	if rate > 0 {
+		left = (time.Duration(float64(pr.budget-s.Evaluations) / rate * float64(time.Second))).Round(time.Second).String()
+	}
+	feasible := 100 * float64(s.Feasible) / float64(max(s.Evaluations, 1))
+	hypervolume := report.HypervolumeText(pr.problem, s.Hypervolume)
+	if pr.terminal {
+		fmt.Fprintf(pr.w, "\r\x1b[K%d of %d designs  %.0f/s  %.0f %% feasible  front %d  hypervolume %s  %s left",
+			s.Evaluations, pr.budget, rate, feasible, s.Front, hypervolume, left)
+		return
+	}
+	pr.log.Info("searching", "designs", s.Evaluations, "of", pr.budget, "per_second", int(rate), "feasible_percent", int(feasible),
+		"front", s.Front, "hypervolume", hypervolume, "left", left)
+}
+
+// end clears the line.
+func (pr *progress) end() {
+	if pr.terminal {
+		fmt.Fprint(pr.w, "\r\x1b[K")
+	}
+}

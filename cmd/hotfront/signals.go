@@ -1,0 +1,40 @@
+package main
+
+import (
+	"context"
+	"fmt"
+	"io"
+	"os"
+	"os/signal"
+	"syscall"
+)
+
+// stopSignals are those that ask a search to stop with a checkpoint.
+func stopSignals() []os.Signal { return []os.Signal{os.Interrupt, syscall.SIGTERM, syscall.SIGUSR1} }
+
+// withSignals gives a context that ends at the first signal; the second ends the program.
+func withSignals(parent context.Context, errw io.Writer) (context.Context, func()) {
+	ctx, cancel := context.WithCancel(parent)
+	signals := make(chan os.Signal, 2)
+	signal.Notify(signals, stopSignals()...)
+	done := make(chan struct{})
+	go func() {
+		select {
+		case <-signals:
+			fmt.Fprintln(errw, "\nhotfront: stopping after the designs under way; a second signal stops at once")
+			cancel()
+		case <-done:
+			return
+		}
+		select {
+		case <-signals:
+			os.Exit(exitInterrupted)
+		case <-done:
+		}
+	}()
+	return ctx, func() {
+		signal.Stop(signals)
+		close(done)
+		cancel()
+	}
+}

@@ -1,0 +1,222 @@
+package report
+
+import (
+	"fmt"
+	"io"
+	"math"
+	"strings"
+
+	"hotfront/model"
+	"hotfront/studies"
+)
+
+// Design is one evaluated design.
+type Design struct {
+	Study       *studies.Study
+	Engine      model.Engine
+	Performance model.Performance
+}
+
+// DesignJSON is a Design as JSON holds it: SI, names as `hotfront fields` lists them.
+type DesignJSON struct {
+	Study       string             `json:"study"`
+	Version     string             `json:"model_version"`
+	Cause       string             `json:"cause,omitempty"`
+	Design      map[string]any     `json:"design"`
+	Performance map[string]float64 `json:"performance,omitempty"`
+	Losses      map[string]float64 `json:"losses,omitempty"`
+	Limits      []LimitJSON        `json:"limits,omitempty"`
+	Corrections map[string]any     `json:"corrections"`
+	Warnings    []string           `json:"warnings"`
+}
+
+// LimitJSON is one limit, SI.
+type LimitJSON struct {
+	Name   string  `json:"name"`
+	Value  float64 `json:"value"`
+	Bound  float64 `json:"bound"`
+	Margin float64 `json:"margin"`
+	Met    bool    `json:"met"`
+}
+
+// JSON gives the design for JSON.
+func (d *Design) JSON() DesignJSON {
+	j := DesignJSON{
+		Study: d.Study.Name, Version: model.Version,
+		Design:      Inputs(d.Study, &d.Engine),
+		Corrections: corrections(d.Study),
+		Warnings:    []string{},
+	}
+	if d.Performance.Cause != model.None {
+		j.Cause = d.Performance.Cause.String()
+		return j
+	}
+	j.Performance, j.Losses = Results(d.Study, &d.Performance)
+	j.Limits = Limits(d.Study, &d.Engine, &d.Performance)
+	j.Warnings = append(j.Warnings, d.Performance.Warnings.Texts()...)
+	return j
+}
+
+func corrections(s *studies.Study) map[string]any {
+	c := &s.Corrections
+	return map[string]any{
+		"set": s.CorrectionsName(), "flow_friction": c.FlowFriction, "cycle_work": c.CycleWork,
+		"drive_effectiveness": c.Effectiveness, "seal_friction": c.SealFriction,
+	}
+}
+
+// Inputs lists the inputs that say a design: numbers in SI, choices by name.
+func Inputs(s *studies.Study, e *model.Engine) map[string]any {
+	m := map[string]any{}
+	for _, v := range s.Design(e) {
+		switch v.Field.Kind {
+		case studies.Choice:
+			m[v.Field.Path] = v.Field.Choices[int(v.SI)]
+		case studies.Whole:
+			m[v.Field.Path] = int(v.SI)
+		default:
+			m[v.Field.Path] = v.SI
+		}
+	}
+	return m
+}
+
+// Results splits the results into performance and losses, SI.
+func Results(s *studies.Study, p *model.Performance) (performance, losses map[string]float64) {
+	performance, losses = map[string]float64{}, map[string]float64{}
+	outputs := s.Outputs()
+	for i := range outputs {
+		o := &outputs[i]
+		if name, ok := strings.CutPrefix(o.Name, studies.LossPrefix); ok {
+			losses[name] = o.Get(p)
+		} else {
+			performance[o.Name] = o.Get(p)
+		}
+	}
+	return performance, losses
+}
+
+// Limits says how the limits stand.
+func Limits(s *studies.Study, e *model.Engine, p *model.Performance) []LimitJSON {
+	list := []LimitJSON{}
+	for _, r := range s.LimitResults(e, p) {
+		list = append(list, LimitJSON(r))
+	}
+	return list
+}
+
+// CSV writes every input and result on a line of its own.
+func (d *Design) CSV(w io.Writer) error {
+	var rows [][]string
+	for _, v := range d.Study.Design(&d.Engine) {
+		rows = append(rows, []string{"design", v.Field.Path, v.Field.Format(v.SI), unit(v.Field.Unit)})
+	}
+	if d.Performance.Cause != model.None {
+		rows = append(rows, []string{"cause", "", d.Performance.Cause.String(), ""})
+		return CSV(w, []string{"part", "name", "value", "unit"}, rows)
+	}
+	outputs := d.Study.Outputs()
+	for i := range outputs {
+		o := &outputs[i]
+		part, name := "performance", o.Name
+		if short, ok := strings.CutPrefix(o.Name, studies.LossPrefix); ok {
+			part, name = "losses", short
+		}
+		rows = append(rows, []string{part, name, o.Format(o.Get(&d.Performance)), unit(o.Unit)})
+	}
+	return CSV(w, []string{"part", "name", "value", "unit"}, rows)
+}
+
+func unit(name string) string {
+	if name == "-" {
+		return ""
+	}
+	return name
+}
+
+// Table writes the design for people.
+func (d *Design) Table(w io.Writer, s Style) error {
+	p := &d.Performance
+	fmt.Fprintf(w, "%s\n", d.Study.Name)
+	if d.Study.About != "" {
+		fmt.Fprintf(w, "%s\n", d.Study.About)
+	}
+	fmt.Fprintf(w, "\n")
+	if p.Cause != model.None {
+		_, err := fmt.Fprintf(w, "No result: %s.\n", p.Cause)
+		return err
+	}
+	outputs := d.Study.Outputs()
+	table := Table{Title: "Performance", Head: [][]string{{"result", "value", "unit", "meaning"}}, Left: []int{2, 3}}
+	for i := range outputs {
+		o := &outputs[i]
+		if strings.HasPrefix(o.Name, studies.LossPrefix) || o.Name == "energy_residual" {
+			continue
+		}
+		table.Rows = append(table.Rows, []string{o.Name, o.Format(o.Get(p)), unit(o.Unit), o.Text})
+	}
+	if err := table.Write(w, Style{Ruled: s.Ruled}); err != nil {
+		return err
+	}
+	fmt.Fprintln(w)
+	if err := d.ledger(w, s); err != nil {
+		return err
+	}
+	fmt.Fprintln(w)
+	if err := d.limits(w, s); err != nil {
+		return err
+	}
+	for _, text := range p.Warnings.Texts() {
+		fmt.Fprintf(w, "Warning: %s.\n", text)
+	}
+	c := &d.Study.Corrections
+	fmt.Fprintf(w, "Corrections %s: flow friction x %g, cycle work x %g, drive effectiveness %g, seal friction %g bar. Model version %s.\n",
+		d.Study.CorrectionsName(), c.FlowFriction, c.CycleWork, c.Effectiveness, c.SealFriction/1e5, model.Version)
+	_, err := fmt.Fprintf(w, "%s\n", Caution)
+	return err
+}
+
+// ledger prints where the heat goes.
+func (d *Design) ledger(w io.Writer, s Style) error {
+	p := &d.Performance
+	share := func(v float64) string { return fmt.Sprintf("%.1f", 100*v/p.HeatIn) }
+	watts := func(v float64) string { return fmt.Sprintf("%.0f", v) }
+	table := Table{Title: "Where the heat goes", Head: [][]string{{"entry", "W", "% of heat in", "what and whereto"}}, Left: []int{3}}
+	add := func(name string, v float64, text string) {
+		table.Rows = append(table.Rows, []string{name, watts(v), share(v), text})
+	}
+	add("heat in", p.HeatIn, "at the hot end")
+	add("shaft work", p.BrakePower, "")
+	add("coolant", p.CoolantHeat, "")
+	add("surroundings", p.Losses.Drive+p.Losses.SealFriction, "from drive and seals")
+	add("rest", p.EnergyResidual*p.HeatIn, "what the solution leaves unbalanced")
+	table.Rows = append(table.Rows, []string{"losses, in the coolant or the surroundings above:", "", "", ""})
+	outputs := d.Study.Outputs()
+	for i := range outputs {
+		o := &outputs[i]
+		if name, ok := strings.CutPrefix(o.Name, studies.LossPrefix); ok {
+			add("  "+name, o.Get(p), o.Text)
+		}
+	}
+	return table.Write(w, Style{Ruled: s.Ruled})
+}
+
+func (d *Design) limits(w io.Writer, s Style) error {
+	if len(d.Study.Limits) == 0 {
+		return nil
+	}
+	table := Table{Title: "Limits", Head: [][]string{{"limit", "value", "bound", "margin", "", ""}}, Left: []int{2, 4, 5}}
+	for i, r := range d.Study.LimitResults(&d.Engine, &d.Performance) {
+		l := &d.Study.Limits[i]
+		met := "met"
+		if !r.Met {
+			met = "NOT MET"
+		}
+		margin := "-"
+		if r.Bound != 0 {
+			margin = fmt.Sprintf("%.1f %%", 100*r.Margin/math.Abs(r.Bound))
+		}
+		table.Rows = append(table.Rows, []string{r.Name, l.Format(r.Value), l.BoundText(), margin, met, l.Expr})
+	}
+	return table.Write(w, Style{Ruled: s.Ruled})
+}

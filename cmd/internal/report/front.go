@@ -1,0 +1,247 @@
+package report
+
+import (
+	"fmt"
+	"io"
+	"math"
+	"slices"
+	"strconv"
+	"strings"
+
+	"hotfront/model"
+	"hotfront/optimize"
+	"hotfront/optimize/pareto"
+	"hotfront/studies"
+)
+
+// Front is the front of a run.
+type Front struct {
+	Problem     *studies.Problem
+	Evaluations int
+	Hypervolume float64
+	Points      []optimize.Point // ascending by aims
+	Seq         []int
+}
+
+// ID names a design of a run by the number it was tried at.
+func ID(seq int) string { return fmt.Sprintf("d%06d", seq) }
+
+// Pick gives the k members that together dominate most, in the order of the front; all for k <= 0.
+func (f *Front) Pick(k int) []int {
+	all := make([]int, len(f.Points))
+	aims := make([][]float64, len(f.Points))
+	for i := range f.Points {
+		all[i], aims[i] = i, f.Points[i].F
+	}
+	if k <= 0 || k >= len(all) {
+		return all
+	}
+	picked := pareto.Choose(aims, f.Problem.Reference(), k)
+	slices.Sort(picked)
+	return picked
+}
+
+// HypervolumeText gives the hypervolume in the units of the tables.
+func HypervolumeText(p *studies.Problem, v float64) string {
+	s := p.Study()
+	var units []string
+	for _, a := range s.Aims {
+		o, _ := studies.OutputNamed(s.Outputs(), a.Name)
+		v *= studies.FromSI(1, o.Quantity, o.Unit) - studies.FromSI(0, o.Quantity, o.Unit)
+		units = append(units, o.Unit)
+	}
+	return fmt.Sprintf("%.5g %s", v, strings.Join(units, " x "))
+}
+
+type frontJSON struct {
+	Study       string            `json:"study"`
+	Seed        uint64            `json:"seed"`
+	Version     string            `json:"model_version"`
+	Evaluations int               `json:"evaluations"`
+	Hypervolume float64           `json:"hypervolume"`
+	Aims        []string          `json:"aims"`
+	Corrections map[string]any    `json:"corrections"`
+	Designs     []frontDesignJSON `json:"designs"`
+}
+
+type frontDesignJSON struct {
+	ID          string             `json:"id"`
+	Design      map[string]any     `json:"design"`
+	Performance map[string]float64 `json:"performance"`
+	Losses      map[string]float64 `json:"losses"`
+	Limits      []LimitJSON        `json:"limits"`
+}
+
+// JSON writes the members picked, SI.
+func (f *Front) JSON(w io.Writer, picked []int, version string) error {
+	s := f.Problem.Study()
+	j := frontJSON{Study: s.Name, Seed: s.Seed, Version: version, Evaluations: f.Evaluations, Hypervolume: f.Hypervolume,
+		Aims: []string{}, Corrections: corrections(s), Designs: []frontDesignJSON{}}
+	for _, a := range s.Aims {
+		j.Aims = append(j.Aims, a.Text())
+	}
+	for _, i := range picked {
+		e, p := f.at(i)
+		performance, losses := Results(s, &p)
+		j.Designs = append(j.Designs, frontDesignJSON{
+			ID: ID(f.Seq[i]), Design: Inputs(s, &e), Performance: performance, Losses: losses, Limits: Limits(s, &e, &p),
+		})
+	}
+	return JSON(w, j)
+}
+
+func (f *Front) at(i int) (model.Engine, model.Performance) {
+	s := f.Problem.Study()
+	return s.EngineAt(f.Points[i].X), f.Problem.PerformanceOf(f.Points[i].Extra)
+}
+
+// CSV writes the members picked: id, free variables, results; units in the head.
+func (f *Front) CSV(w io.Writer, picked []int) error {
+	s := f.Problem.Study()
+	outputs := s.Outputs()
+	head := []string{"id"}
+	for i := range s.Free {
+		field, _ := studies.FieldNamed(s.Fields(), s.Free[i].Path)
+		head = append(head, headed(field.Path, field.Unit))
+	}
+	for i := range outputs {
+		head = append(head, headed(outputs[i].Name, outputs[i].Unit))
+	}
+	var rows [][]string
+	for _, k := range picked {
+		e, p := f.at(k)
+		row := []string{ID(f.Seq[k])}
+		for i := range s.Free {
+			field, _ := studies.FieldNamed(s.Fields(), s.Free[i].Path)
+			row = append(row, exact(field, &e))
+		}
+		for i := range outputs {
+			o := &outputs[i]
+			row = append(row, strconv.FormatFloat(studies.FromSI(o.Get(&p), o.Quantity, o.Unit), 'g', 8, 64))
+		}
+		rows = append(rows, row)
+	}
+	return CSV(w, head, rows)
+}
+
+func exact(field *studies.Field, e *model.Engine) string {
+	if field.Kind == studies.Real {
+		return strconv.FormatFloat(studies.FromSI(field.Get(e), field.Quantity, field.Unit), 'g', 10, 64)
+	}
+	return field.Format(field.Get(e))
+}
+
+func headed(name, unitName string) string {
+	if u := unit(unitName); u != "" {
+		return name + " [" + u + "]"
+	}
+	return name
+}
+
+// Table writes the members picked for people: what they give and what presses on them, then what they are.
+func (f *Front) Table(w io.Writer, picked []int, style Style) error {
+	s := f.Problem.Study()
+	if err := f.gains(w, picked, style); err != nil {
+		return err
+	}
+	fmt.Fprintln(w)
+	table := Table{Title: "What they are", Head: [][]string{{"design"}, {""}, {""}}}
+	for i := range s.Free {
+		field, _ := studies.FieldNamed(s.Fields(), s.Free[i].Path)
+		group, name, ok := strings.Cut(field.Path, ".")
+		if !ok {
+			group, name = "", field.Path
+		}
+		table.Head[0] = append(table.Head[0], group)
+		table.Head[1] = append(table.Head[1], name)
+		table.Head[2] = append(table.Head[2], unit(field.Unit))
+	}
+	for _, k := range picked {
+		e, _ := f.at(k)
+		row := []string{ID(f.Seq[k])}
+		for i := range s.Free {
+			field, _ := studies.FieldNamed(s.Fields(), s.Free[i].Path)
+			row = append(row, field.Format(field.Get(&e)))
+		}
+		table.Rows = append(table.Rows, row)
+	}
+	return table.Write(w, style)
+}
+
+// shownResults are the results that a front's table shows after the aims, where they are not aims themselves.
+func shownResults() []string {
+	return []string{"brake_power", "brake_efficiency", "pressure_max", "heater.metal_temperature", "heater.heat_flux",
+		"flow_loss", "losses.reheat", "regenerator.effectiveness"}
+}
+
+func (f *Front) gains(w io.Writer, picked []int, style Style) error {
+	s := f.Problem.Study()
+	outputs := s.Outputs()
+	var shown []*studies.Output
+	add := func(name string) {
+		if o, ok := studies.OutputNamed(outputs, name); ok && !slices.Contains(shown, o) {
+			shown = append(shown, o)
+		}
+	}
+	for _, a := range s.Aims {
+		add(a.Name)
+	}
+	for _, name := range shownResults() {
+		add(name)
+	}
+	table := Table{Title: "What they give", Head: [][]string{{"design"}, {""}, {""}}}
+	for _, o := range shown {
+		group, name, ok := strings.Cut(o.Name, ".")
+		if !ok {
+			group, name = "", o.Name
+			if head, tail, ok := strings.Cut(o.Name, "_"); ok {
+				group, name = head, tail
+			}
+		}
+		table.Head[0] = append(table.Head[0], group)
+		table.Head[1] = append(table.Head[1], name)
+		table.Head[2] = append(table.Head[2], unit(o.Unit))
+	}
+	if len(s.Limits) > 0 {
+		table.Head[0] = append(table.Head[0], "nearest limit")
+		table.Left = []int{len(shown) + 1}
+	}
+	for _, k := range picked {
+		e, p := f.at(k)
+		row := []string{ID(f.Seq[k])}
+		for _, o := range shown {
+			row = append(row, o.Format(o.Get(&p)))
+		}
+		if len(s.Limits) > 0 {
+			row = append(row, nearest(s, &e, &p))
+		}
+		table.Rows = append(table.Rows, row)
+	}
+	return table.Write(w, style)
+}
+
+// nearest names the limit with the least room, as a share of its bound, of 100 K for a temperature.
+func nearest(s *studies.Study, e *model.Engine, p *model.Performance) string {
+	text, least := "-", math.Inf(1)
+	for i, r := range s.LimitResults(e, p) {
+		l := &s.Limits[i]
+		scale := math.Abs(r.Bound)
+		if l.Quantity == studies.Temperature {
+			scale = 100
+		}
+		if scale == 0 || r.Margin/scale >= least {
+			continue
+		}
+		least = r.Margin / scale
+		text = r.Name + ", " + room(l, r.Margin)
+	}
+	return text
+}
+
+// room says how much is left to a bound, in the limit's unit.
+func room(l *studies.Limit, margin float64) string {
+	if l.Quantity == studies.Temperature {
+		return fmt.Sprintf("%.0f K left", margin)
+	}
+	return strings.TrimSpace(studies.FormatSI(margin, l.Quantity, l.Unit, 2)+" "+unit(l.Unit)) + " left"
+}
