@@ -40,7 +40,7 @@ func newProgress(w io.Writer, p *studies.Problem, budget int) *progress {
 
 func logger(w io.Writer, terminal bool) *slog.Logger {
 	if terminal {
-		return slog.New(tint.NewHandler(w, &tint.Options{TimeFormat: time.TimeOnly, NoColor: os.Getenv("NO_COLOR") != ""}))
+		return slog.New(tint.NewTextHandler(w, &tint.Options{TimeFormat: time.TimeOnly, NoColor: os.Getenv("NO_COLOR") != ""}))
 	}
 	return slog.New(slog.NewTextHandler(w, nil))
 }

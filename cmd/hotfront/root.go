@@ -100,10 +100,17 @@ func (p *program) profile() error {
 func arguments(names ...string) cobra.PositionalArgs {
 	return func(c *cobra.Command, args []string) error {
 		if len(args) != len(names) {
-			return failed(exitUsage, fmt.Sprintf("%s takes %d argument(s): %s; see %s --help", c.Name(), len(names), strings.Join(names, " "), c.CommandPath()))
+			return failed(exitUsage, fmt.Sprintf("%s takes %s; see %s --help", c.Name(), wanted(names), c.CommandPath()))
 		}
 		return nil
 	}
+}
+
+func wanted(names []string) string {
+	if len(names) == 0 {
+		return "no argument"
+	}
+	return strings.Join(names, " and ")
 }
 
 // format is the --format flag.
@@ -148,8 +155,11 @@ func (p *program) load(file string, sets ...string) (*studies.Study, []byte, err
 		fmt.Fprintln(p.err, i.String())
 	}
 	if s == nil {
-		n := len(issues.Mistakes())
-		return nil, nil, failed(exitStudy, fmt.Sprintf("%s is not valid: %d mistake(s)", file, n))
+		text := "1 mistake"
+		if n := len(issues.Mistakes()); n > 1 {
+			text = fmt.Sprintf("%d mistakes", n)
+		}
+		return nil, nil, failed(exitStudy, file+" is not valid: "+text)
 	}
 	return s, data, nil
 }

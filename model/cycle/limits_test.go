@@ -109,7 +109,7 @@ func settled(t *testing.T, s *Solver, dst *Result, p *Path, cycles int) {
 		s.conserved()
 		s.newton = 3
 		if !s.run() {
-			t.Fatal(fmt.Sprintf("cycle %d left the physical range", c+1))
+			t.Fatalf("cycle %d left the physical range", c+1)
 		}
 		if c == cycles-1 {
 			break

@@ -63,7 +63,6 @@ type Solver struct {
 
 // sums are integrals over one cycle.
 type sums struct {
-	time             float64           // [s]
 	pressure         float64           // integral p dt
 	work             [2]float64        // of expansion and compression space [J]
 	heat             [MaxCells]float64 // from the wall into the gas [J]
