@@ -30,9 +30,9 @@ func (w *Workspace) setPerformance(dst *Performance, e *Engine, c *Corrections) 
 	l := &dst.Losses
 
 	dst.PVPower = (r.WorkExpansion + r.WorkCompression) * f
-	hotFriction := c.FlowFriction * (fr.heater + fr.hotDucts + hotShare*fr.regenerator)
-	coldFriction := c.FlowFriction * (fr.cooler + fr.coldDucts + (1-hotShare)*fr.regenerator)
-	l.FlowFriction = hotFriction + coldFriction
+	l.FlowFriction = c.FlowFriction * fr.sum()
+	hotFriction := w.hotFriction(l)
+	coldFriction := l.FlowFriction - hotFriction
 	dst.FlowLoss = l.FlowFriction
 	dst.HeaterFlowLoss = c.FlowFriction * fr.heater
 	dst.RegeneratorFlowLoss = c.FlowFriction * fr.regenerator
@@ -68,6 +68,20 @@ func (w *Workspace) setPerformance(dst *Performance, e *Engine, c *Corrections) 
 	dst.Mach = fr.mach
 	dst.HeaterReynolds, dst.RegeneratorReynolds, dst.CoolerReynolds =
 		fr.reMean[cycle.PartHeater], fr.reMean[cycle.PartRegenerator], fr.reMean[cycle.PartCooler]
+}
+
+// hotFriction is the part of the flow loss that turns into heat on the hot side [W].
+func (w *Workspace) hotFriction(l *Losses) float64 {
+	fr := &w.friction
+	sum := fr.sum()
+	if sum == 0 {
+		return 0
+	}
+	return l.FlowFriction * (fr.heater + fr.hotDucts + hotShare*fr.regenerator) / sum
+}
+
+func (f *friction) sum() float64 {
+	return f.heater + f.regenerator + f.cooler + f.hotDucts + f.coldDucts
 }
 
 func (w *Workspace) heat(part cycle.Part) float64 {

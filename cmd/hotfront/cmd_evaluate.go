@@ -44,7 +44,12 @@ func (p *program) evaluate(file string, o *evaluateOptions) error {
 		return err
 	}
 	d := report.Design{Study: s, Engine: s.Engine}
-	model.Evaluate(&d.Performance, &d.Engine, &s.Corrections, model.NewWorkspace())
+	w := model.NewWorkspace()
+	model.Evaluate(&d.Performance, &d.Engine, &s.Corrections, w)
+	if d.Performance.Cause == model.None {
+		d.SecondLaw = new(model.SecondLaw)
+		model.SecondLawOf(d.SecondLaw, &d.Performance, &d.Engine, w)
+	}
 	switch o.format {
 	case "json":
 		err = report.JSON(p.out, d.JSON())

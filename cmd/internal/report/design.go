@@ -1,9 +1,11 @@
 package report
 
 import (
+	"cmp"
 	"fmt"
 	"io"
 	"math"
+	"slices"
 	"strings"
 
 	"hotfront/model"
@@ -15,6 +17,7 @@ type Design struct {
 	Study       *studies.Study
 	Engine      model.Engine
 	Performance model.Performance
+	SecondLaw   *model.SecondLaw // may be nil
 }
 
 // DesignJSON is a Design as JSON holds it: SI, names as `hotfront fields` lists them.
@@ -25,6 +28,7 @@ type DesignJSON struct {
 	Design      map[string]any     `json:"design"`
 	Performance map[string]float64 `json:"performance,omitempty"`
 	Losses      map[string]float64 `json:"losses,omitempty"`
+	LostWork    map[string]float64 `json:"lost_work,omitempty"`
 	Limits      []LimitJSON        `json:"limits,omitempty"`
 	Corrections map[string]any     `json:"corrections"`
 	Warnings    []string           `json:"warnings"`
@@ -52,6 +56,7 @@ func (d *Design) JSON() DesignJSON {
 		return j
 	}
 	j.Performance, j.Losses = Results(d.Study, &d.Performance)
+	j.LostWork = d.lostWork()
 	j.Limits = Limits(d.Study, &d.Engine, &d.Performance)
 	j.Warnings = append(j.Warnings, d.Performance.Warnings.Texts()...)
 	return j
@@ -163,6 +168,12 @@ func (d *Design) Table(w io.Writer, s Style) error {
 		return err
 	}
 	fmt.Fprintln(w)
+	if d.SecondLaw != nil {
+		if err := d.secondLaw(w, s); err != nil {
+			return err
+		}
+		fmt.Fprintln(w)
+	}
 	if err := d.limits(w, s); err != nil {
 		return err
 	}
@@ -198,6 +209,33 @@ func (d *Design) ledger(w io.Writer, s Style) error {
 			add("  "+name, o.Get(p), o.Text)
 		}
 	}
+	return table.Write(w, Style{Ruled: s.Ruled})
+}
+
+// lostWork is the work that each part costs [W].
+func (d *Design) lostWork() map[string]float64 {
+	if d.SecondLaw == nil {
+		return nil
+	}
+	m := map[string]float64{}
+	for _, item := range d.SecondLaw.Items() {
+		m[item.Name] = item.Made * d.Engine.Coolant.Inlet
+	}
+	return m
+}
+
+// secondLaw prints where work is lost, most first.
+func (d *Design) secondLaw(w io.Writer, s Style) error {
+	items := d.SecondLaw.Items()
+	sorted := items[:]
+	slices.SortStableFunc(sorted, func(a, b model.SecondLawItem) int { return cmp.Compare(b.Made, a.Made) })
+	table := Table{Title: "Where work is lost, by the entropy made", Head: [][]string{{"part", "W", "% of what the heat could give"}}}
+	could := d.SecondLaw.LostWork + d.Performance.BrakePower
+	for _, item := range sorted {
+		lost := item.Made * d.Engine.Coolant.Inlet
+		table.Rows = append(table.Rows, []string{item.Name, fmt.Sprintf("%.0f", lost), fmt.Sprintf("%.1f", 100*lost/could)})
+	}
+	table.Rows = append(table.Rows, []string{"shaft work", fmt.Sprintf("%.0f", d.Performance.BrakePower), fmt.Sprintf("%.1f", 100*d.Performance.BrakePower/could)})
 	return table.Write(w, Style{Ruled: s.Ruled})
 }
 
