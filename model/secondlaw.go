@@ -26,12 +26,18 @@ type SecondLaw struct {
 	LostWork float64 // heat in times Carnot's efficiency less brake power [W]
 }
 
+// SecondLawGrid is the grid to draw up the ledger on: the sum over the parts meets the lost work within 0.3 %
+// there, on the production grid within 1.2 %.
+func SecondLawGrid() Grid {
+	g := ProductionGrid()
+	g.Steps *= 2
+	return g
+}
+
 // SecondLawOf draws up the ledger of the design that w evaluated last, with its performance p. It costs
 // about a tenth of an evaluation and allocates nothing; Evaluate leaves it out.
 //
-// The entries carry the error of the time steps: on the production grid up to 0.15 % of the heat in over
-// the temperature of the coolant, which can show as a little less than nothing in a space that mixes
-// almost nothing.
+// Sum and LostWork differ by the error of the time steps and the rest of the energy balance.
 //
 // Heat enters at the outer wall of the heater tubes; all heat that leaves does so at the temperature of
 // the coolant's inlet. Friction on the hot side is heat made at the hot wall.

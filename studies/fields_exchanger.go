@@ -57,7 +57,7 @@ func exchangerFields() []Field {
 			func(e *model.Engine) *float64 { return &e.Regenerator.Porosity }),
 		choice("regenerator.alloy", "alloy of the matrix (UNS number)", alloyNames(),
 			func(e *model.Engine) *metal.Alloy { return &e.Regenerator.Alloy }, defaults("S30400")),
-		measured("regenerator.canister_wall", "wall thickness of a canister", Length, "mm", "0.05 mm to 100 mm", "0.5 mm to 10 mm",
+		measured("regenerator.canister_wall", "wall thickness of a canister", Length, "mm", "0.05 mm to 100 mm", "0.5 mm to 20 mm",
 			func(e *model.Engine) *float64 { return &e.Regenerator.CanisterWall }, defaults("1.5 mm")),
 		choice("regenerator.canister_alloy", "alloy of the canisters (UNS number); that of the heater when not given", alloyNames(),
 			func(e *model.Engine) *metal.Alloy { return &e.Regenerator.CanisterAlloy }, follows("heater.alloy")),

@@ -12,11 +12,9 @@ import (
 )
 
 // TestSecondLawOfShippedStudies takes random designs over the box of each shipped study. No part may make
-// entropy below zero, but for what the tolerance of the periodic state leaves open (the balance holds to
-// 2e-4 of the heat, twice that is allowed); all parts together must cost the work that the heat could have
-// given and the shaft did not get (Gouy and Stodola), within 0.2 % where 1 % is asked for; and no design
-// may beat Carnot. Three times the steps of the production grid are taken: there the error of the time steps
-// shows as some entropy too much or too little in a space that mixes almost nothing, up to 0.15 % of the heat. `go test ./studies -run SecondLaw -entropy-designs 10000` takes more.
+// entropy below zero; all parts together must cost the work that the heat could have given and the shaft did
+// not get (Gouy and Stodola), within 1 %; and no design may beat Carnot.
+// `go test ./studies -run SecondLaw -entropy-designs 10000` takes more designs.
 func TestSecondLawOfShippedStudies(t *testing.T) {
 	examples, err := Examples()
 	if err != nil {
@@ -31,9 +29,7 @@ func TestSecondLawOfShippedStudies(t *testing.T) {
 			}
 			vars := p.Variables()
 			unit := sample.Latin(rand.New(rand.NewPCG(1, 0)), *entropyDesigns, len(vars))
-			grid := model.ProductionGrid()
-			grid.Steps *= 3
-			w := model.NewWorkspaceGrid(grid)
+			w := model.NewWorkspaceGrid(model.SecondLawGrid())
 			var perf model.Performance
 			var law model.SecondLaw
 			least, worst, count := 0.0, 0.0, 0
@@ -52,23 +48,22 @@ func TestSecondLawOfShippedStudies(t *testing.T) {
 				}
 				count++
 				model.SecondLawOf(&law, &perf, &e, w)
-				floor := 4e-4 * perf.HeatIn / e.Coolant.Inlet
 				for _, item := range law.Items() {
-					least = min(least, item.Made/floor)
-					if item.Made < -floor {
-						t.Errorf("design %d: %s makes %g W/K, below -%g", i, item.Name, item.Made, floor)
+					least = min(least, item.Made)
+					if item.Made < 0 {
+						t.Errorf("design %d: %s makes %g W/K", i, item.Name, item.Made)
 					}
 				}
 				gap := math.Abs(law.Sum*e.Coolant.Inlet/law.LostWork - 1)
 				worst = max(worst, gap)
-				if gap > 2e-3 {
+				if gap > 1e-2 {
 					t.Errorf("design %d: entropy made costs %.1f W, lost work is %.1f W", i, law.Sum*e.Coolant.Inlet, law.LostWork)
 				}
 				if perf.BrakeEfficiency > perf.CarnotEfficiency {
 					t.Errorf("design %d: efficiency %g above Carnot's %g", i, perf.BrakeEfficiency, perf.CarnotEfficiency)
 				}
 			}
-			t.Logf("%d designs: least entry %.2f of the tolerance, worst gap of sum and lost work %.1e", count, least, worst)
+			t.Logf("%d designs: least entry %.1e W/K, worst gap of sum and lost work %.1e", count, least, worst)
 			if count < *entropyDesigns/2 {
 				t.Errorf("only %d designs of %d have a result", count, *entropyDesigns)
 			}

@@ -44,11 +44,13 @@ func (p *program) evaluate(file string, o *evaluateOptions) error {
 		return err
 	}
 	d := report.Design{Study: s, Engine: s.Engine}
-	w := model.NewWorkspace()
-	model.Evaluate(&d.Performance, &d.Engine, &s.Corrections, w)
-	if d.Performance.Cause == model.None {
+	model.Evaluate(&d.Performance, &d.Engine, &s.Corrections, model.NewWorkspace())
+	var fine model.Performance
+	w := model.NewWorkspaceGrid(model.SecondLawGrid())
+	model.Evaluate(&fine, &d.Engine, &s.Corrections, w)
+	if d.Performance.Cause == model.None && fine.Cause == model.None {
 		d.SecondLaw = new(model.SecondLaw)
-		model.SecondLawOf(d.SecondLaw, &d.Performance, &d.Engine, w)
+		model.SecondLawOf(d.SecondLaw, &fine, &d.Engine, w)
 	}
 	switch o.format {
 	case "json":
