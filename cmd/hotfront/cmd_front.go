@@ -53,6 +53,9 @@ func (p *program) front(dir string, o *frontOptions) error {
 	return p.printFront(f, o.format, o.top, failures, run.Meta().Model)
 }
 
+// historyRows is the number of rows that tell how the front grew.
+const historyRows = 20
+
 // readFront rebuilds the front from the designs of an archive.
 func readFront(run *archive.Archive) (*report.Front, []optimize.CauseCount, error) {
 	m := run.Meta()
@@ -71,7 +74,19 @@ func readFront(run *archive.Archive) (*report.Front, []optimize.CauseCount, erro
 	kept := pareto.NewArchive(m.Aims)
 	members := map[int]optimize.Point{}
 	causes := map[string]int{}
+	total, err := run.Len()
+	if err != nil {
+		return nil, nil, err
+	}
+	feasible, next := 0, 1
 	err = run.Each(func(seq int, p *optimize.Point) error {
+		// A row of history before the design that begins the next part, and one at the end.
+		if seq == next*total/historyRows {
+			f.History = append(f.History, optimize.HistoryRow{Evaluations: seq, Feasible: feasible, Front: kept.Len(), Hypervolume: kept.Hypervolume(m.Reference)})
+		}
+		for next < historyRows && seq >= next*total/historyRows {
+			next++
+		}
 		f.Evaluations = seq + 1
 		if p.Cause != "" {
 			causes[p.Cause]++
@@ -80,6 +95,7 @@ func readFront(run *archive.Archive) (*report.Front, []optimize.CauseCount, erro
 		if pareto.Violation(p.G) > 0 {
 			return nil
 		}
+		feasible++
 		aims := slices.Clone(p.F)
 		taken, err := kept.Add(aims, seq)
 		if taken {
@@ -96,6 +112,7 @@ func readFront(run *archive.Archive) (*report.Front, []optimize.CauseCount, erro
 		f.Points = append(f.Points, members[tag])
 	}
 	f.Hypervolume = kept.Hypervolume(m.Reference)
+	f.History = append(f.History, optimize.HistoryRow{Evaluations: f.Evaluations, Feasible: feasible, Front: kept.Len(), Hypervolume: f.Hypervolume})
 	var failures []optimize.CauseCount
 	for cause, n := range causes {
 		failures = append(failures, optimize.CauseCount{Cause: cause, Count: n})

@@ -164,11 +164,14 @@ func (p *program) searchIn(ctx context.Context, run *archive.Archive, problem *s
 		report.Blame(p.err, problem, r.LeastViolation, r.Failures, r.Evaluations)
 		return failed(exitInfeasible, "no design meets all limits")
 	}
-	front := report.Front{Problem: problem, Evaluations: r.Evaluations, Hypervolume: r.Hypervolume, Points: r.Front, Seq: r.FrontSeq}
 	if r.Exhausted {
 		pr.log.Info("no further design left to try")
 	}
-	return p.printFront(&front, o.format, o.top, r.Failures, model.Version)
+	front, failures, err := readFront(run)
+	if err != nil {
+		return err
+	}
+	return p.printFront(front, o.format, o.top, failures, run.Meta().Model)
 }
 
 // printFront prints a front in the format asked for.
@@ -187,6 +190,7 @@ func (p *program) printFront(f *report.Front, as format, top int, failures []opt
 		return err
 	}
 	fmt.Fprintln(p.out)
+	fmt.Fprintf(p.out, "Hypervolume over the run: %s designs.\n", f.Growth())
 	f.Press(p.out, failures)
 	c := &s.Corrections
 	fmt.Fprintf(p.out, "Corrections %s: flow friction x %g, cycle work x %g, drive effectiveness %g, seal friction %g bar. Model version %s.\n%s\n",

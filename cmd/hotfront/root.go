@@ -52,10 +52,14 @@ distributed model of the cycle and its losses, and searches for the designs that
   hotfront check my-engine.yaml                what is wrong, or what it asks for
   hotfront evaluate my-engine.yaml             the start design, its losses and limits
   hotfront search my-engine.yaml --run runs/a  the front; run it again to go on`,
-		SilenceErrors: true, SilenceUsage: true,
-		Args: func(_ *cobra.Command, args []string) error {
+		SilenceErrors: true, SilenceUsage: true, SuggestionsMinimumDistance: 2,
+		Args: func(c *cobra.Command, args []string) error {
 			if len(args) > 0 {
-				return failed(exitUsage, fmt.Sprintf("unknown command %q; see hotfront --help", args[0]))
+				hint := ""
+				if near := c.SuggestionsFor(args[0]); len(near) > 0 {
+					hint = "; did you mean " + strings.Join(near, " or ") + "?"
+				}
+				return failed(exitUsage, fmt.Sprintf("unknown command %q%s; see hotfront --help", args[0], hint))
 			}
 			return nil
 		},

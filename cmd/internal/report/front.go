@@ -21,6 +21,7 @@ type Front struct {
 	Hypervolume float64
 	Points      []optimize.Point // ascending by aims
 	Seq         []int
+	History     []optimize.HistoryRow
 }
 
 // ID names a design of a run by the number it was tried at.
@@ -61,7 +62,15 @@ type frontJSON struct {
 	Hypervolume float64           `json:"hypervolume"`
 	Aims        []string          `json:"aims"`
 	Corrections map[string]any    `json:"corrections"`
+	History     []historyJSON     `json:"history"`
 	Designs     []frontDesignJSON `json:"designs"`
+}
+
+type historyJSON struct {
+	Evaluations int     `json:"evaluations"`
+	Feasible    int     `json:"feasible"`
+	Front       int     `json:"front"`
+	Hypervolume float64 `json:"hypervolume"`
 }
 
 type frontDesignJSON struct {
@@ -72,11 +81,27 @@ type frontDesignJSON struct {
 	Limits      []LimitJSON        `json:"limits"`
 }
 
+// Growth says how the hypervolume grew over the run: its share of the last value at each fifth.
+func (f *Front) Growth() string {
+	var parts []string
+	for i := 1; i <= 5; i++ {
+		k := i*len(f.History)/5 - 1
+		if k < 0 || f.Hypervolume <= 0 {
+			continue
+		}
+		parts = append(parts, fmt.Sprintf("%.1f %% at %d", 100*f.History[k].Hypervolume/f.Hypervolume, f.History[k].Evaluations))
+	}
+	return strings.Join(parts, ", ")
+}
+
 // JSON writes the members picked, SI.
 func (f *Front) JSON(w io.Writer, picked []int, version string) error {
 	s := f.Problem.Study()
 	j := frontJSON{Study: s.Name, Seed: s.Seed, Version: version, Evaluations: f.Evaluations, Hypervolume: f.Hypervolume,
-		Aims: []string{}, Corrections: corrections(s), Designs: []frontDesignJSON{}}
+		Aims: []string{}, Corrections: corrections(s), History: []historyJSON{}, Designs: []frontDesignJSON{}}
+	for _, h := range f.History {
+		j.History = append(j.History, historyJSON(h))
+	}
 	for _, a := range s.Aims {
 		j.Aims = append(j.Aims, a.Text())
 	}
