@@ -5,13 +5,48 @@ import (
 	"testing"
 )
 
-func TestLook(t *testing.T) {
-	tab := Table{Title: "Front", Head: [][]string{{"design", "power", "efficiency"}, {"", "kW", "%"}}, Rows: [][]string{{"d12", "1.2", "33.4"}, {"d1213", "12.2", "3.4"}}}
-	for _, s := range []Style{{}, {Ruled: true}, {Width: 14}} {
+func TestTable(t *testing.T) {
+	table := Table{
+		Title: "Front", Left: []int{3},
+		Head: [][]string{{"design", "power", "η", "what"}, {"", "kW", "%"}},
+		Rows: [][]string{{"d12", "1.2", "33.4", "slow"}, {"d1213", "12.2", "3.4", "fast µ"}},
+	}
+	for _, c := range []struct {
+		name  string
+		style Style
+		want  string
+	}{
+		{"plain", Style{}, "Front\n" +
+			"design  power     η  what\n" +
+			"           kW     %\n" +
+			"d12       1.2  33.4  slow\n" +
+			"d1213    12.2   3.4  fast µ\n"},
+		{"in parts", Style{Width: 15}, "Front\n" +
+			"design  power\n" +
+			"           kW\n" +
+			"d12       1.2\n" +
+			"d1213    12.2\n\n" +
+			"design     η\n" +
+			"           %\n" +
+			"d12     33.4\n" +
+			"d1213    3.4\n\n" +
+			"design  what\n" +
+			"d12     slow\n" +
+			"d1213   fast µ\n"},
+	} {
 		var b strings.Builder
-		if err := tab.Write(&b, s); err != nil {
+		if err := table.Write(&b, c.style); err != nil {
 			t.Fatal(err)
 		}
-		t.Logf("\n%s", b.String())
+		if b.String() != c.want {
+			t.Errorf("%s:\n%s\nwant:\n%s", c.name, b.String(), c.want)
+		}
+	}
+	var b strings.Builder
+	if err := table.Write(&b, Style{Ruled: true}); err != nil {
+		t.Fatal(err)
+	}
+	if !strings.Contains(b.String(), "-----") || strings.ContainsAny(b.String(), "│┌\x1b") {
+		t.Errorf("a ruled table has a line of dashes and nothing else:\n%s", b.String())
 	}
 }
