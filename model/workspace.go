@@ -8,7 +8,7 @@ import (
 )
 
 // Version names the state of the physics: it changes whenever a result may change.
-const Version = "2"
+const Version = "3"
 
 // Grid is the resolution of the cycle solver.
 type Grid struct {
@@ -19,7 +19,7 @@ type Grid struct {
 
 // ProductionGrid is the grid every command uses; its error against finer grids is tested.
 func ProductionGrid() Grid {
-	return Grid{Heater: 6, Regenerator: 12, Cooler: 6, Steps: 60, CoarseSteps: 24}
+	return Grid{Heater: 6, Regenerator: 12, Cooler: 6, Steps: 48, CoarseSteps: 20}
 }
 
 // Workspace is all the memory an evaluation needs. It belongs to one goroutine at a time.

@@ -72,7 +72,7 @@ func blowEffectiveness(t *testing.T, p *Path) float64 {
 // matrix capacity to 1e-4 of the effectiveness and 1 % of what is lost, and with finite capacity
 // ratio C the factor 1 - 1/(9 C^1.93) within 1 %, in the range of that fit (NTU of one blow 4 to 28).
 // A matrix lighter than twice the gas of a blow, lighter than any real one, wants the finer grid: there
-// the production grid gives up to 1.4 % too much.
+// twelve cells and 60 steps give up to 1.4 % too much.
 //
 // Source: W. M. Kays and A. L. London, Compact heat exchangers, 3rd edition 1984; the factor from memory.
 func TestBlow(t *testing.T) {

@@ -21,7 +21,7 @@ func quantities(r *Result, p *Path) map[string]float64 {
 // TestAdiabaticLimit holds the solver against the ideal adiabatic cycle of four machines, integrated
 // by a general-purpose integrator to tight tolerance (testdata/reference/adiabatic_reference.json,
 // made by adiabatic_reference.py): works, heats, pressures and mean temperatures of both spaces within
-// 0.1 % at 120 steps, and at the 60 steps of the production grid too but for one mean temperature, 0.11 %.
+// 0.1 % at 120 steps, and at 60 steps too but for one mean temperature, 0.11 %.
 //
 // The net work of the low-difference machine is what is left of two works eleven times as large, so
 // 0.1 % of these is 1 % of it. It is held to 0.5 % as the solver accepts the state, and to 0.2 % in the
@@ -93,7 +93,7 @@ func TestAdiabaticOrder(t *testing.T) {
 		t.Errorf("error %.2e at 30 steps, %.2e at 120: order below %.1f", errs[0], errs[2], math.Log2(errs[0]/errs[2])/2)
 	}
 	if errs[1] > 3e-4 {
-		t.Errorf("error %.2e at the 60 steps of the production grid", errs[1])
+		t.Errorf("error %.2e at 60 steps", errs[1])
 	}
 }
 

@@ -34,7 +34,7 @@ func (m *machine) law() law {
 // grid is the number of cells and steps the solver under test is given.
 type grid struct{ heater, matrix, cooler, steps, coarse int }
 
-func production() grid { return grid{6, 12, 4, 60, 24} }
+func production() grid { return grid{6, 12, 6, 48, 20} }
 
 func tubeCell(part Part, tubes, bore, length, share, wall float64) Cell {
 	area := tubes * math.Pi / 4 * bore * bore
