@@ -16,14 +16,7 @@ func (s *Study) Encode() []byte {
 		fmt.Fprintf(&b, "about: %s\n", quoted(s.About))
 	}
 	s.encodeEngine(&b)
-	if s.CorrectionsName() == "none" {
-		fmt.Fprintf(&b, "corrections: none\n")
-	} else {
-		fmt.Fprintf(&b, "corrections:\n")
-		for _, c := range correctionTable() {
-			fmt.Fprintf(&b, "  %s: %s\n", c.name, exactText(*c.at(&s.Corrections), c.quantity, c.unit))
-		}
-	}
+	b.WriteString(s.encodeCorrections())
 	s.encodeFree(&b)
 	s.encodeLimits(&b)
 	if len(s.Aims) > 0 {

@@ -6,8 +6,6 @@ import (
 	"unicode"
 
 	yaml "go.yaml.in/yaml/v4"
-
-	"hotfront/model"
 )
 
 // place is where something stands: in the file by line and column, or in a --set.
@@ -112,6 +110,8 @@ func (r *reader) read(root *yaml.Node, sets []string) {
 	}
 	if e, ok := nodes["corrections"]; ok {
 		r.correctionsBlock(e.value)
+	} else {
+		r.correctionsWord(scalar{text: fittedSet})
 	}
 	r.overrides(sets)
 	if _, ok := nodes["engine"]; ok {
@@ -254,67 +254,4 @@ func contains(words []string, word string) bool {
 		}
 	}
 	return false
-}
-
-// correctionsBlock reads corrections: none, or a block of factors.
-func (r *reader) correctionsBlock(n *yaml.Node) {
-	if n.Kind == yaml.ScalarNode {
-		r.correctionsWord(scalar{n.Value, n, at(n)})
-		return
-	}
-	entries, ok := r.block(n, "corrections")
-	if !ok {
-		return
-	}
-	for _, e := range entries {
-		if !contains(correctionNames(), e.key) {
-			r.unknownKey(e, "corrections", correctionNames())
-			continue
-		}
-		if s, ok := r.scalar(e.value, join("corrections", e.key)); ok {
-			r.factor[e.key] = s
-		}
-	}
-}
-
-func (r *reader) correctionsWord(s scalar) {
-	switch s.text {
-	case "none":
-		clear(r.factor)
-	case "rig":
-		r.fault(s.place, "corrections", &fault{NotAvailable, "the set fitted to the rig is not in this version",
-			"write none, or a block with " + orList(correctionNames())})
-	default:
-		r.fault(s.place, "corrections", &fault{Corrections, fmt.Sprintf("%q is no set of corrections, and files of corrections are not read in this version", clip(s.text)),
-			"write none, or a block with " + orList(correctionNames())})
-	}
-}
-
-func correctionNames() []string {
-	var names []string
-	for _, c := range correctionTable() {
-		names = append(names, c.name)
-	}
-	return names
-}
-
-// corrections sets the factors; those not given are neutral.
-func (r *reader) corrections() {
-	s := r.study
-	s.Corrections = model.NoCorrections()
-	for _, c := range correctionTable() {
-		text, given := r.factor[c.name]
-		if !given {
-			continue
-		}
-		v, f := parseQuantity(text.text, c.quantity)
-		if f == nil && !c.hard.holds(v) {
-			f = outside(v, c.quantity, c.unit, c.hard)
-		}
-		if f != nil {
-			r.fault(text.place, "corrections."+c.name, f)
-			continue
-		}
-		*c.at(&s.Corrections) = v
-	}
 }

@@ -25,6 +25,7 @@ func (r *reader) overrides(sets []string) {
 			r.correctionsWord(s)
 		case isFactor && contains(correctionNames(), name):
 			r.factor[name] = s
+			delete(r.factor, "set") // no longer that set
 		case isInput:
 			for i := range r.fields {
 				if o := &r.fields[i]; f.Group != "" && o.Group == f.Group {

@@ -27,6 +27,8 @@ type Study struct {
 	steps   []step    // how a design is made from the start design
 	start   []float64 // the start design as X; nil when a --set put it outside
 	written []int     // fields that say the start design, in order
+
+	correctionSet string // name and version of the set of corrections; empty for none
 }
 
 // Free is one free variable.
@@ -58,14 +60,6 @@ type Limit struct {
 	Unit     string   // in which tables show it
 
 	program *program
-}
-
-// CorrectionsName says which corrections are in use.
-func (s *Study) CorrectionsName() string {
-	if s.Corrections == model.NoCorrections() {
-		return "none"
-	}
-	return "by hand"
 }
 
 // Fields is the table the study was read with.

@@ -138,7 +138,6 @@ func TestMoreMistakes(t *testing.T) {
 		{"piston bore of a beta", edit(t, "layout: gamma", "layout: beta"), []Code{Contradiction}},
 		{"beta frees piston bore", edit(t, "layout: gamma", "layout: beta", "piston: {bore: 80 mm,", "piston: {",
 			"heater.tube_count: {from", "piston.bore: {from: 50 mm, to: 100 mm}\n  heater.tube_count: {from"), []Code{FreeNotPossible}},
-		{"rig", edit(t, "corrections: none", "corrections: rig"), []Code{NotAvailable}},
 		{"correction out of range", edit(t, "corrections: none", "corrections: {cycle_work: 1.2}"), []Code{OutOfRange}},
 		{"correction unknown", edit(t, "corrections: none", "corrections: {cycle_wrok: 0.9}"), []Code{KeyUnknown}},
 		{"free a result", edit(t, "free: ", "free:\n  mach: {from: 0, to: 1} #"), []Code{FreeNotPossible}},
@@ -223,7 +222,7 @@ func TestSet(t *testing.T) {
 		{"heater.tube_count", SetInvalid}, {"=4", SetInvalid}, {"", SetInvalid}, {"heater.tube_count=", SetInvalid},
 		{"heater.tube_cuont=4", SetInvalid}, {"heater.tube_count=4.5", WholeExpected}, {"speed=3 mm", UnitWrong},
 		{"gas=steam", ChoiceUnknown}, {"regenerator.porosity=1.2", OutOfRange}, {"expansion_piston.bore=40 mm", DoesNotApply},
-		{"corrections=rig", NotAvailable}, {"corrections.cycle_work=2", OutOfRange},
+		{"corrections=rigg", Corrections}, {"corrections.cycle_work=2", OutOfRange},
 	} {
 		s, issues := Load("a.yaml", data, c.set)
 		if s != nil || issues.Mistakes()[0].Code != c.code || !strings.HasPrefix(issues.Mistakes()[0].File, "--set") {

@@ -193,7 +193,7 @@ func (p *program) printFront(f *report.Front, as format, top int, failures []opt
 	fmt.Fprintf(p.out, "Hypervolume over the run: %s designs.\n", f.Growth())
 	f.Press(p.out, failures)
 	c := &s.Corrections
-	fmt.Fprintf(p.out, "Corrections %s: flow friction x %g, cycle work x %g, drive effectiveness %g, seal friction %g bar. Model version %s.\n%s\n",
+	fmt.Fprintf(p.out, "Corrections %s: flow friction x %.3g, cycle work x %.3g, drive effectiveness %.3g, seal friction %.3g bar. Model version %s.\n%s\n",
 		s.CorrectionsName(), c.FlowFriction, c.CycleWork, c.Effectiveness, c.SealFriction/1e5, version, report.Caution)
 	return nil
 }

@@ -102,7 +102,7 @@ func TestLeaveOut(t *testing.T) {
 			return nil
 		}}
 	for i, want := range []float64{4, 8.0 / 3, 4.0 / 3, -8} { // mean of the others less the one
-		if got := LeaveOut(p, Settings{})[i]; math.Abs(got-want) > 1e-9 {
+		if got := LeaveOut(p, p.Start, Settings{})[i]; math.Abs(got-want) > 1e-9 {
 			t.Errorf("without %d: %g, want %g", i, got, want)
 		}
 	}

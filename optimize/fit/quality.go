@@ -2,6 +2,7 @@ package fit
 
 import (
 	"math"
+	"slices"
 
 	"gonum.org/v1/gonum/mat"
 )
@@ -85,14 +86,16 @@ func square2(n int) [][]float64 {
 	return m
 }
 
-// LeaveOut fits again without one residual after the other and gives, for each, the residual that the fit
-// to the others leaves there: how well the rest predicts it. NaN where the rest has no result.
-func LeaveOut(p *Problem, s Settings) []float64 {
+// LeaveOut fits again without one residual after the other, beginning at from, and gives, for each, the
+// residual that the fit to the others leaves there: how well the rest predicts it. NaN where the rest has no
+// result.
+func LeaveOut(p *Problem, from []float64, s Settings) []float64 {
 	left := make([]float64, p.Count)
 	for skip := range left {
 		all := make([]float64, p.Count)
 		q := *p
 		q.Count = p.Count - 1
+		q.Start = slices.Clone(from)
 		q.Residuals = func(dst, x []float64) error {
 			if err := p.Residuals(all, x); err != nil {
 				return err

@@ -181,7 +181,7 @@ func (d *Design) Table(w io.Writer, s Style) error {
 		fmt.Fprintf(w, "Warning: %s.\n", text)
 	}
 	c := &d.Study.Corrections
-	fmt.Fprintf(w, "Corrections %s: flow friction x %g, cycle work x %g, drive effectiveness %g, seal friction %g bar. Model version %s.\n",
+	fmt.Fprintf(w, "Corrections %s: flow friction x %.3g, cycle work x %.3g, drive effectiveness %.3g, seal friction %.3g bar. Model version %s.\n",
 		d.Study.CorrectionsName(), c.FlowFriction, c.CycleWork, c.Effectiveness, c.SealFriction/1e5, model.Version)
 	_, err := fmt.Fprintf(w, "%s\n", Caution)
 	return err
