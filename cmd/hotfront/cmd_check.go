@@ -99,13 +99,13 @@ func limitText(l *studies.Limit) string {
 }
 
 func (p *program) checkTable(s *studies.Study) error {
-	style := report.Style{Ruled: p.style().Ruled}
+	style := p.style().Listing()
 	fmt.Fprintf(p.out, "%s\n", s.Name)
 	if s.About != "" {
 		fmt.Fprintf(p.out, "%s\n", s.About)
 	}
 	fmt.Fprintln(p.out)
-	start := report.Table{Title: "Start design", Head: [][]string{{"variable", "value", "free"}}, Left: []int{2}}
+	start := report.Table{Title: "Start design", Head: [][]string{{"variable", "value", "free"}}, Left: []int{2}, Wrap: []int{2}}
 	free := map[string]string{}
 	for i := range s.Free {
 		free[s.Free[i].Path] = s.FreeText(i)
@@ -118,7 +118,7 @@ func (p *program) checkTable(s *studies.Study) error {
 	}
 	if len(s.Limits) > 0 {
 		fmt.Fprintln(p.out)
-		limits := report.Table{Title: "Limits", Head: [][]string{{"limit", "bound"}}, Left: []int{1}}
+		limits := report.Table{Title: "Limits", Head: [][]string{{"limit", "bound"}}, Left: []int{1}, Wrap: []int{1}}
 		for i := range s.Limits {
 			limits.Rows = append(limits.Rows, []string{s.Limits[i].Name, limitText(&s.Limits[i])})
 		}

@@ -64,8 +64,8 @@ func (p *program) fields(o *fieldsOptions) error {
 		}
 		return report.CSV(p.out, []string{"name", "kind", "unit", "default", "range", "usual", "choices", "applies", "text"}, lines)
 	}
-	inputs := report.Table{Title: "Variables, below engine: in a study", Head: [][]string{{"variable", "unit", "default", "usual", "meaning"}}, Left: []int{1, 2, 3, 4}}
-	results := report.Table{Title: "Results, for limits and aims", Head: [][]string{{"result", "unit", "meaning"}}, Left: []int{1, 2}}
+	inputs := report.Table{Title: "Variables, below engine: in a study", Head: [][]string{{"variable", "unit", "default", "usual", "meaning"}}, Left: []int{1, 2, 3, 4}, Wrap: []int{3, 4}}
+	results := report.Table{Title: "Results, for limits and aims", Head: [][]string{{"result", "unit", "meaning"}}, Left: []int{1, 2}, Wrap: []int{2}}
 	for _, r := range rows {
 		if r.Kind == "result" {
 			results.Rows = append(results.Rows, []string{r.Name, r.Unit, r.Text})
@@ -84,7 +84,7 @@ func (p *program) fields(o *fieldsOptions) error {
 		}
 		inputs.Rows = append(inputs.Rows, []string{r.Name, r.Unit, r.Default, usual, text})
 	}
-	style := report.Style{Ruled: p.style().Ruled}
+	style := p.style().Listing()
 	if err := inputs.Write(p.out, style); err != nil {
 		return err
 	}

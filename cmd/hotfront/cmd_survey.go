@@ -199,5 +199,5 @@ func (p *program) printSurvey(r *surveyJSON, as format) error {
 		return report.CSV(p.out, []string{"what", "value", "share"}, rows)
 	}
 	table := report.Table{Title: r.Study, Head: [][]string{{"what", "value", "share"}}, Rows: rows}
-	return table.Write(p.out, report.Style{Ruled: p.style().Ruled})
+	return table.Write(p.out, p.style().Listing())
 }

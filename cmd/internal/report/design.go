@@ -6,6 +6,7 @@ import (
 	"io"
 	"math"
 	"slices"
+	"strconv"
 	"strings"
 
 	"hotfront/model"
@@ -132,6 +133,20 @@ func (d *Design) CSV(w io.Writer) error {
 	return CSV(w, []string{"part", "name", "value", "unit"}, rows)
 }
 
+// resultText writes a result to three digits, whole numbers too: no power or life is known to more.
+func resultText(o *studies.Output, p *model.Performance) string {
+	v := o.Get(p)
+	if o.Quantity == studies.Temperature {
+		return o.Format(v)
+	}
+	in := studies.FromSI(v, o.Quantity, o.Unit)
+	if a := math.Abs(in); a < 1000 || a >= 1e9 {
+		return o.Format(v)
+	}
+	step := math.Pow(10, math.Floor(math.Log10(math.Abs(in)))-2)
+	return strconv.FormatFloat(math.Round(in/step)*step, 'f', 0, 64)
+}
+
 func unit(name string) string {
 	if name == "-" {
 		return ""
@@ -152,15 +167,16 @@ func (d *Design) Table(w io.Writer, s Style) error {
 		return err
 	}
 	outputs := d.Study.Outputs()
-	table := Table{Title: "Performance", Head: [][]string{{"result", "value", "unit", "meaning"}}, Left: []int{2, 3}}
-	for i := range outputs {
-		o := &outputs[i]
-		if strings.HasPrefix(o.Name, studies.LossPrefix) || o.Name == "energy_residual" {
-			continue
+	table := Table{Title: "Performance", Head: [][]string{{"result", "value", "unit", "meaning"}}, Left: []int{2, 3}, Wrap: []int{3}, Spare: 3}
+	for i, group := range grouped(outputs) {
+		if i > 0 {
+			table.Rows = append(table.Rows, []string{"", "", "", ""})
 		}
-		table.Rows = append(table.Rows, []string{o.Name, o.Format(o.Get(p)), unit(o.Unit), o.Text})
+		for _, o := range group {
+			table.Rows = append(table.Rows, []string{o.Name, resultText(o, p), unit(o.Unit), o.Text})
+		}
 	}
-	if err := table.Write(w, Style{Ruled: s.Ruled}); err != nil {
+	if err := table.Write(w, s.Listing()); err != nil {
 		return err
 	}
 	fmt.Fprintln(w)
@@ -187,12 +203,46 @@ func (d *Design) Table(w io.Writer, s Style) error {
 	return err
 }
 
+// grouped puts the results that are no losses in groups: power and heat, gas, machine, then each part by
+// the first word of its name.
+func grouped(outputs []studies.Output) [][]*studies.Output {
+	var groups [][]*studies.Output
+	at := map[string]int{}
+	general := "power"
+	for i := range outputs {
+		o := &outputs[i]
+		if strings.HasPrefix(o.Name, studies.LossPrefix) || o.Name == "energy_residual" {
+			continue
+		}
+		part, _, ok := strings.Cut(o.Name, ".")
+		if !ok {
+			switch o.Name {
+			case "pressure_mean":
+				general = "gas"
+			case "swept_volume":
+				general = "machine"
+			}
+			part = general
+		} else if part == "coolant" {
+			part = "cooler"
+		}
+		k, known := at[part]
+		if !known {
+			k = len(groups)
+			at[part] = k
+			groups = append(groups, nil)
+		}
+		groups[k] = append(groups[k], o)
+	}
+	return groups
+}
+
 // ledger prints where the heat goes.
 func (d *Design) ledger(w io.Writer, s Style) error {
 	p := &d.Performance
-	share := func(v float64) string { return fmt.Sprintf("%.1f", 100*v/p.HeatIn) }
+	share := func(v float64) string { return fmt.Sprintf("%.1f", math.Round(1000*v/p.HeatIn)/10+0) }
 	watts := func(v float64) string { return fmt.Sprintf("%.0f", v) }
-	table := Table{Title: "Where the heat goes", Head: [][]string{{"entry", "W", "% of heat in", "what and whereto"}}, Left: []int{3}}
+	table := Table{Title: "Where the heat goes", Head: [][]string{{"entry", "W", "% of heat in", "what and whereto"}}, Left: []int{3}, Wrap: []int{3}, Spare: 3}
 	add := func(name string, v float64, text string) {
 		table.Rows = append(table.Rows, []string{name, watts(v), share(v), text})
 	}
@@ -201,7 +251,7 @@ func (d *Design) ledger(w io.Writer, s Style) error {
 	add("coolant", p.CoolantHeat, "")
 	add("surroundings", p.Losses.Drive+p.Losses.SealFriction, "from drive and seals")
 	add("rest", p.EnergyResidual*p.HeatIn, "what the solution leaves unbalanced")
-	table.Rows = append(table.Rows, []string{"losses, in the coolant or the surroundings above:", "", "", ""})
+	table.Rows = append(table.Rows, []string{"losses, within these:", "", "", ""})
 	outputs := d.Study.Outputs()
 	for i := range outputs {
 		o := &outputs[i]
@@ -209,7 +259,7 @@ func (d *Design) ledger(w io.Writer, s Style) error {
 			add("  "+name, o.Get(p), o.Text)
 		}
 	}
-	return table.Write(w, Style{Ruled: s.Ruled})
+	return table.Write(w, s.Listing())
 }
 
 // lostWork is the work that each part costs [W].
@@ -236,14 +286,14 @@ func (d *Design) secondLaw(w io.Writer, s Style) error {
 		table.Rows = append(table.Rows, []string{item.Name, fmt.Sprintf("%.0f", lost), fmt.Sprintf("%.1f", 100*lost/could)})
 	}
 	table.Rows = append(table.Rows, []string{"shaft work", fmt.Sprintf("%.0f", d.Performance.BrakePower), fmt.Sprintf("%.1f", 100*d.Performance.BrakePower/could)})
-	return table.Write(w, Style{Ruled: s.Ruled})
+	return table.Write(w, s.Listing())
 }
 
 func (d *Design) limits(w io.Writer, s Style) error {
 	if len(d.Study.Limits) == 0 {
 		return nil
 	}
-	table := Table{Title: "Limits", Head: [][]string{{"limit", "value", "bound", "margin", "", ""}}, Left: []int{2, 4, 5}}
+	table := Table{Title: "Limits", Head: [][]string{{"limit", "value", "bound", "margin", "", ""}}, Left: []int{2, 4, 5}, Wrap: []int{5}, Spare: 5}
 	for i, r := range d.Study.LimitResults(&d.Engine, &d.Performance) {
 		l := &d.Study.Limits[i]
 		met := "met"
@@ -256,5 +306,5 @@ func (d *Design) limits(w io.Writer, s Style) error {
 		}
 		table.Rows = append(table.Rows, []string{r.Name, l.Format(r.Value), l.BoundText(), margin, met, l.Expr})
 	}
-	return table.Write(w, Style{Ruled: s.Ruled})
+	return table.Write(w, s.Listing())
 }

@@ -170,17 +170,16 @@ func (f *Front) Table(w io.Writer, picked []int, style Style) error {
 		return err
 	}
 	fmt.Fprintln(w)
-	table := Table{Title: "What they are", Head: [][]string{{"design"}, {""}, {""}}}
+	table := Table{Title: "What they are"}
+	names, units := []string{"design"}, []string{""}
 	for i := range s.Free {
 		field, _ := studies.FieldNamed(s.Fields(), s.Free[i].Path)
-		group, name, ok := strings.Cut(field.Path, ".")
-		if !ok {
-			group, name = "", field.Path
+		names, units = append(names, field.Path), append(units, unit(field.Unit))
+		if field.Kind == studies.Choice {
+			table.Left = append(table.Left, i+1)
 		}
-		table.Head[0] = append(table.Head[0], group)
-		table.Head[1] = append(table.Head[1], name)
-		table.Head[2] = append(table.Head[2], unit(field.Unit))
 	}
+	table.Head = headings(names, units)
 	for _, k := range picked {
 		e, _ := f.at(k)
 		row := []string{ID(f.Seq[k])}
@@ -214,28 +213,21 @@ func (f *Front) gains(w io.Writer, picked []int, style Style) error {
 	for _, name := range shownResults() {
 		add(name)
 	}
-	table := Table{Title: "What they give", Head: [][]string{{"design"}, {""}, {""}}}
+	table := Table{Title: "What they give"}
+	names, units := []string{"design"}, []string{""}
 	for _, o := range shown {
-		group, name, ok := strings.Cut(o.Name, ".")
-		if !ok {
-			group, name = "", o.Name
-			if head, tail, ok := strings.Cut(o.Name, "_"); ok {
-				group, name = head, tail
-			}
-		}
-		table.Head[0] = append(table.Head[0], group)
-		table.Head[1] = append(table.Head[1], name)
-		table.Head[2] = append(table.Head[2], unit(o.Unit))
+		names, units = append(names, o.Name), append(units, unit(o.Unit))
 	}
 	if len(s.Limits) > 0 {
-		table.Head[0] = append(table.Head[0], "nearest limit")
-		table.Left = []int{len(shown) + 1}
+		names, units = append(names, "nearest limit"), append(units, "")
+		table.Left, table.Wrap = []int{len(shown) + 1}, []int{len(shown) + 1}
 	}
+	table.Head = headings(names, units)
 	for _, k := range picked {
 		e, p := f.at(k)
 		row := []string{ID(f.Seq[k])}
 		for _, o := range shown {
-			row = append(row, o.Format(o.Get(&p)))
+			row = append(row, resultText(o, &p))
 		}
 		if len(s.Limits) > 0 {
 			row = append(row, nearest(s, &e, &p))
