@@ -6,11 +6,7 @@ import (
 	"io"
 	"os"
 	"os/signal"
-	"syscall"
 )
-
-// stopSignals are those that ask a search to stop with a checkpoint.
-func stopSignals() []os.Signal { return []os.Signal{os.Interrupt, syscall.SIGTERM, syscall.SIGUSR1} }
 
 // withSignals gives a context that ends at the first signal; the second ends the program.
 func withSignals(parent context.Context, errw io.Writer) (context.Context, func()) {
