@@ -42,8 +42,8 @@ const along = 1e-3
 // these the one with the lowest achievement; else the given design. When ctx ends, Polish returns what it has
 // with the context's error. The ledger, which may be nil, must be one of this polish alone.
 //
-// Source: A. P. Wierzbicki, The use of reference objectives in multiobjective optimization, Lecture Notes in
-// Economics and Mathematical Systems 177 (1980) 468-486.
+// Source: A. P. Wierzbicki, The use of reference objectives in multiobjective optimization, Springer LNEMS
+// 177 (1980) 468-486.
 func Polish(ctx context.Context, p Problem, from Point, set PolishSettings, ledger Ledger) (*Polished, error) {
 	sp, err := newSpace(startAt{p, from.X})
 	if err != nil {
