@@ -1,6 +1,7 @@
 package main
 
 import (
+	"errors"
 	"fmt"
 
 	"github.com/spf13/cobra"
@@ -31,6 +32,8 @@ func (p *program) checkCommand() *cobra.Command {
 }
 
 type checkJSON struct {
+	Valid       bool           `json:"valid"`
+	Issues      []issueJSON    `json:"issues"`
 	Study       string         `json:"study"`
 	About       string         `json:"about"`
 	Design      map[string]any `json:"design"`
@@ -43,22 +46,54 @@ type checkJSON struct {
 	Version     string         `json:"model_version"`
 }
 
+// issueJSON is a mistake or a warning.
+type issueJSON struct {
+	Code    string `json:"code"`
+	Warning bool   `json:"warning"`
+	File    string `json:"file"`
+	Line    int    `json:"line"` // 0 when it belongs to no line
+	Column  int    `json:"column"`
+	Key     string `json:"key"`
+	Text    string `json:"text"`
+	Hint    string `json:"hint"`
+}
+
+// mistakesJSON is what JSON holds of a study that is not valid.
+type mistakesJSON struct {
+	Valid  bool        `json:"valid"`
+	Issues []issueJSON `json:"issues"`
+}
+
+func issueList(issues studies.Issues) []issueJSON {
+	list := make([]issueJSON, len(issues))
+	for k, i := range issues {
+		list[k] = issueJSON{string(i.Code), i.Code.Warning(), i.File, i.Line, i.Column, i.Path, i.Text, i.Hint}
+	}
+	return list
+}
+
 type namedText struct {
 	Name string `json:"name"`
 	Text string `json:"text"`
 }
 
 func (p *program) check(file string, o *checkOptions) error {
-	s, _, err := p.load(file, o.sets...)
+	s, _, issues, err := read(file, o.sets...)
+	for _, i := range issues {
+		fmt.Fprintln(p.err, i.String())
+	}
+	if len(issues) > 0 && s == nil && o.format == "json" {
+		err = errors.Join(err, report.JSON(p.out, mistakesJSON{Issues: issueList(issues)}))
+	}
 	if err != nil {
 		return err
 	}
 	switch o.format {
 	case "json":
-		return report.JSON(p.out, checkSummary(s))
+		return report.JSON(p.out, checkSummary(s, issues))
 	case "csv":
 		var rows [][]string
-		j := checkSummary(s)
+		j := checkSummary(s, issues)
 		for _, v := range s.Design(&s.Engine) {
 			rows = append(rows, []string{"design", v.Field.Path, v.Field.ValueText(v.SI)})
 		}
@@ -76,8 +111,8 @@ func (p *program) check(file string, o *checkOptions) error {
 	return p.checkTable(s)
 }
 
-func checkSummary(s *studies.Study) checkJSON {
-	j := checkJSON{Study: s.Name, About: s.About, Design: report.Inputs(s, &s.Engine), Free: []namedText{}, Limits: []namedText{},
+func checkSummary(s *studies.Study, issues studies.Issues) checkJSON {
+	j := checkJSON{Valid: true, Issues: issueList(issues), Study: s.Name, About: s.About, Design: report.Inputs(s, &s.Engine), Free: []namedText{}, Limits: []namedText{},
 		Aims: []string{}, Evaluations: s.Evaluations, Seed: s.Seed, Corrections: s.CorrectionsName(), Version: model.Version}
 	for i := range s.Free {
 		j.Free = append(j.Free, namedText{s.Free[i].Path, s.FreeText(i)})

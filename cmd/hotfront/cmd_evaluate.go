@@ -1,36 +1,46 @@
 package main
 
 import (
+	"errors"
+	"fmt"
+	"strconv"
+
 	"github.com/spf13/cobra"
 
 	"hotfront/cmd/internal/report"
 	"hotfront/model"
+	"hotfront/optimize"
+	"hotfront/optimize/archive"
+	"hotfront/studies"
 )
 
 type evaluateOptions struct {
 	format      format
 	sets        []string
 	corrections string
+	design      string
 }
 
 func (p *program) evaluateCommand() *cobra.Command {
 	var o evaluateOptions
 	c := &cobra.Command{
-		Use:   "evaluate STUDY",
+		Use:   "evaluate STUDY | DIR --design ID",
 		Short: "Works out one design: performance, losses, limits",
-		Long: `evaluate works out the start design of a study, changed by --set, and prints its performance, the ledger of its
-losses and how its limits stand.
+		Long: `evaluate works out the start design of a study, or a design of a run, changed by --set, and prints its performance,
+the ledger of its losses and how its limits stand. It works out a design that has no result too, and says why.
 
 ` + cautions,
 		Example: `  hotfront evaluate studies/examples/sawmill-heat-and-power.yaml
   hotfront evaluate my-engine.yaml --set speed=800rpm --set gas=hydrogen
-  hotfront evaluate my-engine.yaml --corrections none --format json`,
-		Args: arguments("STUDY"),
+  hotfront evaluate my-engine.yaml --corrections none --format json
+  hotfront evaluate runs/sawmill --design d000123`,
+		Args: arguments("STUDY or DIR"),
 		RunE: func(_ *cobra.Command, args []string) error { return p.evaluate(args[0], &o) },
 	}
 	o.format.add(c)
 	c.Flags().StringArrayVar(&o.sets, "set", nil, "path=value instead of the study's; may be given often")
 	c.Flags().StringVar(&o.corrections, "corrections", "", "corrections instead of the study's: none")
+	c.Flags().StringVar(&o.design, "design", "", "a design of the run in DIR, as d000123")
 	return c
 }
 
@@ -39,7 +49,13 @@ func (p *program) evaluate(file string, o *evaluateOptions) error {
 	if o.corrections != "" {
 		sets = append(sets, "corrections="+o.corrections)
 	}
-	s, _, err := p.load(file, sets...)
+	var s *studies.Study
+	var err error
+	if o.design != "" {
+		s, err = runDesign(file, o.design, sets)
+	} else {
+		s, _, err = p.load(file, sets...)
+	}
 	if err != nil {
 		return err
 	}
@@ -64,4 +80,44 @@ func (p *program) evaluate(file string, o *evaluateOptions) error {
 		return failed(exitFailure, "no result: "+d.Performance.Cause.String())
 	}
 	return err
+}
+
+// runDesign gives the study of a run with one of its designs as the start design. sets come on top.
+func runDesign(dir, id string, sets []string) (s *studies.Study, err error) {
+	seq, ok := report.SeqOf(id)
+	if !ok {
+		return nil, failed(exitUsage, fmt.Sprintf("%q is no name of a design, as d000123", id))
+	}
+	run, err := archive.Read(dir)
+	if err != nil {
+		return nil, err
+	}
+	defer func() { err = errors.Join(err, run.Close()) }()
+	if s, err = storedStudy(run.Meta()); err != nil {
+		return nil, err
+	}
+	points := make([]optimize.Point, 1)
+	n, err := run.Recall(seq, points)
+	if err != nil {
+		return nil, err
+	}
+	if n == 0 {
+		return nil, failed(exitUsage, fmt.Sprintf("%s has no design %s", dir, id))
+	}
+	engine := s.EngineAt(points[0].X)
+	var all []string
+	for _, v := range s.Design(&engine) {
+		switch {
+		case !v.Free:
+		case v.Field.Kind == studies.Choice:
+			all = append(all, v.Field.Path+"="+v.Field.Choices[int(v.SI)])
+		default: // SI, to the last bit
+			all = append(all, v.Field.Path+"="+strconv.FormatFloat(v.SI, 'f', -1, 64))
+		}
+	}
+	s, err = storedStudy(run.Meta(), append(all, sets...)...)
+	if s != nil {
+		s.Name += " " + id
+	}
+	return s, err
 }

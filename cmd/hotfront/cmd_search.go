@@ -5,11 +5,11 @@ import (
 	"errors"
 	"fmt"
 	"runtime"
+	"strings"
 	"time"
 
 	"github.com/spf13/cobra"
 
-	"hotfront/cmd/internal/report"
 	"hotfront/model"
 	"hotfront/optimize"
 	"hotfront/optimize/archive"
@@ -25,7 +25,7 @@ type searchOptions struct {
 	seedGiven   bool
 	workers     int
 	driver      string
-	top         int
+	top         top
 }
 
 func (p *program) searchCommand() *cobra.Command {
@@ -56,7 +56,7 @@ DIR must be on a local disk: the archive is not safe on network file systems.
 	f.Uint64Var(&o.seed, "seed", 0, "seed instead of the study's")
 	f.IntVar(&o.workers, "workers", runtime.GOMAXPROCS(0), "designs worked on at a time; does not change the front")
 	f.StringVar(&o.driver, "driver", "", "genetic or simplex (one aim); by default simplex for one aim over numbers, else genetic")
-	f.IntVar(&o.top, "top", 12, "designs of the front to show, 0 for all")
+	o.top.add(c)
 	return c
 }
 
@@ -64,8 +64,8 @@ func (p *program) search(ctx context.Context, file string, o *searchOptions) err
 	switch {
 	case o.dir == "":
 		return failed(exitUsage, "search needs --run DIR, a folder for its archive")
-	case o.evaluations < 0 || o.hours < 0 || o.workers < 1 || o.top < 0:
-		return failed(exitUsage, "--evaluations, --hours and --top must not be negative, --workers at least 1")
+	case o.evaluations < 0 || o.hours < 0 || o.workers < 1:
+		return failed(exitUsage, "--evaluations and --hours must not be negative, --workers at least 1")
 	}
 	s, data, err := p.load(file)
 	if err != nil {
@@ -87,7 +87,7 @@ func (p *program) search(ctx context.Context, file string, o *searchOptions) err
 	}
 	run, err := archive.Open(o.dir, runMeta(s, data, problem, driver))
 	if err != nil {
-		return err
+		return explainOther(err, s, o.dir)
 	}
 	err = p.searchIn(ctx, run, problem, driver, o)
 	return errors.Join(err, run.Close())
@@ -148,52 +148,49 @@ func (p *program) searchIn(ctx context.Context, run *archive.Archive, problem *s
 	if before > 0 {
 		pr.log.Info("going on", "run", o.dir, "designs", before)
 	}
+	if archive.OnNetwork(o.dir) {
+		pr.log.Warn("the run folder is on a network file system, where the archive is not safe: use a local disk", "run", o.dir)
+	}
 	start := time.Now()
 	r, err := optimize.Run(ctx, problem, optimize.Settings{Evaluations: s.Evaluations, Seed: s.Seed, Workers: o.workers, Driver: driver}, run, pr.observe)
 	pr.end()
 	stopped := err != nil && ctx.Err() != nil && errors.Is(err, ctx.Err())
-	if err != nil && !stopped {
+	switch {
+	case stopped || err == nil:
+	case errors.Is(err, optimize.ErrLedgerMismatch):
+		return fmt.Errorf("%w; version %s of the program, which began this run, searched another way: give this search a folder of its own", err, run.Meta().Program)
+	default:
 		return err
 	}
+	seconds := time.Since(start).Seconds()
 	pr.log.Info("searched", "designs", r.Evaluations, "feasible", r.Feasible, "failed", r.Failed, "repeated", r.Duplicates,
-		"seconds", fmt.Sprintf("%.1f", time.Since(start).Seconds()))
+		"seconds", fmt.Sprintf("%.1f", seconds), "per_second", int(float64(max(0, r.Evaluations-before))/max(seconds, 1e-9)))
 	if stopped {
 		return failed(exitStopped, fmt.Sprintf("stopped after %d of %d designs; the same command goes on, `hotfront front %s` shows what there is", r.Evaluations, s.Evaluations, o.dir))
-	}
-	if len(r.Front) == 0 {
-		report.Blame(p.err, problem, r.LeastViolation, r.Failures, r.Evaluations)
-		return failed(exitInfeasible, "no design meets all limits")
 	}
 	if r.Exhausted {
 		pr.log.Info("no further design left to try")
 	}
-	front, failures, err := readFront(run)
+	front, err := readFront(run, r.Evaluations)
 	if err != nil {
 		return err
 	}
-	return p.printFront(front, o.format, o.top, failures, run.Meta().Model)
+	return p.printFront(front, o.format, &o.top, run.Meta().Model)
 }
 
-// printFront prints a front in the format asked for.
-func (p *program) printFront(f *report.Front, as format, top int, failures []optimize.CauseCount, version string) error {
-	switch as {
-	case "json":
-		return f.JSON(p.out, f.Pick(top), version)
-	case "csv":
-		return f.CSV(p.out, f.Pick(top))
-	}
-	s := f.Problem.Study()
-	picked := f.Pick(top)
-	fmt.Fprintf(p.out, "%s: %d designs on the front of %d tried, seed %d; %d shown. Hypervolume %s.\n\n",
-		s.Name, len(f.Points), f.Evaluations, s.Seed, len(picked), report.HypervolumeText(f.Problem, f.Hypervolume))
-	if err := f.Table(p.out, picked, p.style()); err != nil {
+// explainOther adds to the error of a folder that holds another run what has changed in its study.
+func explainOther(err error, s *studies.Study, dir string) error {
+	mismatch, ok := errors.AsType[*archive.MismatchError](err)
+	if !ok || !mismatch.Has("study") {
 		return err
 	}
-	fmt.Fprintln(p.out)
-	fmt.Fprintf(p.out, "Hypervolume over the run: %s designs.\n", f.Growth())
-	f.Press(p.out, failures)
-	c := &s.Corrections
-	fmt.Fprintf(p.out, "Corrections %s: flow friction x %.3g, cycle work x %.3g, drive effectiveness %.3g, seal friction %.3g bar. Model version %s.\n%s\n",
-		s.CorrectionsName(), c.FlowFriction, c.CycleWork, c.Effectiveness, c.SealFriction/1e5, version, report.Caution)
-	return nil
+	run, readErr := archive.Read(dir)
+	if readErr != nil {
+		return errors.Join(err, readErr)
+	}
+	stored := run.Meta().Canonical
+	if closeErr := run.Close(); closeErr != nil {
+		return errors.Join(err, closeErr)
+	}
+	return fmt.Errorf("%w\n%s", err, strings.Join(changes(stored, string(s.Encode())), "\n"))
 }

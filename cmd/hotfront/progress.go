@@ -67,12 +67,23 @@ func (pr *progress) observe(s optimize.Progress) {
 	feasible := 100 * float64(s.Feasible) / float64(max(s.Evaluations, 1))
 	hypervolume := report.HypervolumeText(pr.problem, s.Hypervolume)
 	if pr.terminal {
-		fmt.Fprintf(pr.w, "\r\x1b[K%d of %d designs  %.0f/s  %.0f %% feasible  front %d  hypervolume %s  %s left",
+		line := fmt.Sprintf("%d of %d designs  %.0f/s  %.0f %% feasible  front %d  hypervolume %s  %s left",
 			s.Evaluations, pr.budget, rate, feasible, s.Front, hypervolume, left)
+		fmt.Fprintf(pr.w, "\r\x1b[K%.*s", max(20, pr.width()-1), line)
 		return
 	}
 	pr.log.Info("searching", "designs", s.Evaluations, "of", pr.budget, "per_second", int(rate), "feasible_percent", int(feasible),
 		"front", s.Front, "hypervolume", hypervolume, "left", left)
+}
+
+// width is that of the terminal now.
+func (pr *progress) width() int {
+	if f, ok := pr.w.(*os.File); ok {
+		if width, _, err := term.GetSize(int(f.Fd())); err == nil {
+			return width
+		}
+	}
+	return 80
 }
 
 // end clears the line.

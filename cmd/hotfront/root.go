@@ -150,20 +150,26 @@ func (p *program) style() report.Style {
 
 // load reads a study and prints what is wrong with it, or its warnings, to the log.
 func (p *program) load(file string, sets ...string) (*studies.Study, []byte, error) {
-	data, err := os.ReadFile(file)
-	if err != nil {
-		return nil, nil, err
-	}
-	s, issues := studies.Load(file, data, sets...)
+	s, data, issues, err := read(file, sets...)
 	for _, i := range issues {
 		fmt.Fprintln(p.err, i.String())
 	}
+	return s, data, err
+}
+
+// read reads a study. The study is nil with an error when there are mistakes among the issues.
+func read(file string, sets ...string) (*studies.Study, []byte, studies.Issues, error) {
+	data, err := os.ReadFile(file)
+	if err != nil {
+		return nil, nil, nil, err
+	}
+	s, issues := studies.Load(file, data, sets...)
 	if s == nil {
 		text := "1 mistake"
 		if n := len(issues.Mistakes()); n > 1 {
 			text = fmt.Sprintf("%d mistakes", n)
 		}
-		return nil, nil, failed(exitStudy, file+" is not valid: "+text)
+		return nil, nil, issues, failed(exitStudy, file+" is not valid: "+text)
 	}
-	return s, data, nil
+	return s, data, issues, nil
 }

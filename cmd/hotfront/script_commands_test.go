@@ -1,8 +1,10 @@
 package main
 
 import (
+	"bytes"
 	"encoding/json"
 	"os"
+	"reflect"
 	"strconv"
 
 	"github.com/rogpeppe/go-internal/testscript"
@@ -39,6 +41,40 @@ func jsonKeys(ts *testscript.TestScript, neg bool, args []string) {
 	for _, key := range args[1:] {
 		if _, ok := object[key]; !ok {
 			ts.Fatalf("%s has no key %q", args[0], key)
+		}
+	}
+}
+
+// sameDesign asks that `evaluate` gives, for every design of a front, what the archive holds, bit for bit:
+// samedesign FRONT.json DIR.
+func sameDesign(ts *testscript.TestScript, neg bool, args []string) {
+	if neg || len(args) != 2 {
+		ts.Fatalf("usage: samedesign FRONT.json DIR")
+	}
+	data, err := os.ReadFile(ts.MkAbs(args[0]))
+	ts.Check(err)
+	type design struct {
+		ID          string
+		Design      map[string]any
+		Performance map[string]float64
+		Losses      map[string]float64
+		Limits      []map[string]any
+	}
+	var front struct{ Designs []design }
+	ts.Check(json.Unmarshal(data, &front))
+	if len(front.Designs) == 0 {
+		ts.Fatalf("%s has no designs", args[0])
+	}
+	for _, want := range front.Designs {
+		var out, errw bytes.Buffer
+		if code := execute([]string{"evaluate", ts.MkAbs(args[1]), "--design", want.ID, "--format", "json"}, nil, &out, &errw); code != 0 {
+			ts.Fatalf("evaluate %s: exit code %d: %s", want.ID, code, errw.String())
+		}
+		var got design
+		ts.Check(json.Unmarshal(out.Bytes(), &got))
+		got.ID = want.ID
+		if !reflect.DeepEqual(got, want) {
+			ts.Fatalf("%s evaluated anew is not what the archive holds:\n%v\n%v", want.ID, got, want)
 		}
 	}
 }

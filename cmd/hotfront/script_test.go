@@ -25,8 +25,9 @@ func TestScripts(t *testing.T) {
 			return nil
 		},
 		Cmds: map[string]func(ts *testscript.TestScript, neg bool, args []string){
-			"exits":    exits,
-			"jsonkeys": jsonKeys,
+			"exits":      exits,
+			"jsonkeys":   jsonKeys,
+			"samedesign": sameDesign,
 		},
 		RequireUniqueNames: true,
 	})

@@ -99,7 +99,6 @@ func (e *DamagedError) Unwrap() error { return e.Err }
 
 // Primary result codes of SQLite; the low byte of an extended code.
 const (
-	sqliteBusy     = 5
 	sqliteReadOnly = 8
 	sqliteCorrupt  = 11
 	sqliteFull     = 13

@@ -71,6 +71,12 @@ func corrections(s *studies.Study) map[string]any {
 	}
 }
 
+func correctionsText(s *studies.Study) string {
+	c := &s.Corrections
+	return fmt.Sprintf("Corrections %s: flow friction x %.3g, cycle work x %.3g, drive effectiveness %.3g, seal friction %.3g bar.",
+		s.CorrectionsName(), c.FlowFriction, c.CycleWork, c.Effectiveness, c.SealFriction/1e5)
+}
+
 // Inputs lists the inputs that say a design: numbers in SI, choices by name.
 func Inputs(s *studies.Study, e *model.Engine) map[string]any {
 	m := map[string]any{}
@@ -196,10 +202,7 @@ func (d *Design) Table(w io.Writer, s Style) error {
 	for _, text := range p.Warnings.Texts() {
 		fmt.Fprintf(w, "Warning: %s.\n", text)
 	}
-	c := &d.Study.Corrections
-	fmt.Fprintf(w, "Corrections %s: flow friction x %.3g, cycle work x %.3g, drive effectiveness %.3g, seal friction %.3g bar. Model version %s.\n",
-		d.Study.CorrectionsName(), c.FlowFriction, c.CycleWork, c.Effectiveness, c.SealFriction/1e5, model.Version)
-	_, err := fmt.Fprintf(w, "%s\n", Caution)
+	_, err := fmt.Fprintf(w, "%s Model version %s.\n%s\n", correctionsText(d.Study), model.Version, Caution)
 	return err
 }
 

@@ -22,10 +22,31 @@ type Front struct {
 	Points      []optimize.Point // ascending by aims
 	Seq         []int
 	History     []optimize.HistoryRow
+	Failures    []optimize.CauseCount // largest first
+
+	// While no design meets all limits: the one that comes nearest, nil when every design failed, and how
+	// near any design comes to each limit.
+	Nearest    *optimize.Point
+	NearestSeq int
+	Reach      []Reach
+}
+
+// Reach says how near the designs of a run come to one limit.
+type Reach struct {
+	Met    int                 // designs that meet it
+	Result studies.LimitResult // of the design with the most room, or the least miss
+	Seq    int                 // number of that design
 }
 
 // ID names a design of a run by the number it was tried at.
 func ID(seq int) string { return fmt.Sprintf("d%06d", seq) }
+
+// SeqOf is the number of a design by its name, the inverse of ID.
+func SeqOf(id string) (int, bool) {
+	digits, ok := strings.CutPrefix(id, "d")
+	seq, err := strconv.ParseUint(digits, 10, 62)
+	return int(seq), ok && err == nil
+}
 
 // Pick gives the k members that together dominate most, in the order of the front; all for k <= 0.
 func (f *Front) Pick(k int) []int {
@@ -161,6 +182,20 @@ func headed(name, unitName string) string {
 		return name + " [" + u + "]"
 	}
 	return name
+}
+
+// Report writes the members picked for people, with what pressed the front.
+func (f *Front) Report(w io.Writer, picked []int, style Style, version string) error {
+	s := f.Problem.Study()
+	fmt.Fprintf(w, "%s: %d designs on the front of %d tried, seed %d; %d shown. Hypervolume %s.\n\n",
+		s.Name, len(f.Points), f.Evaluations, s.Seed, len(picked), HypervolumeText(f.Problem, f.Hypervolume))
+	if err := f.Table(w, picked, style); err != nil {
+		return err
+	}
+	fmt.Fprintf(w, "\nHypervolume over the run: %s designs.\n", f.Growth())
+	f.Press(w)
+	_, err := fmt.Fprintf(w, "%s Model version %s.\n%s\n", correctionsText(s), version, Caution)
+	return err
 }
 
 // Table writes the members picked for people: what they give and what presses on them, then what they are.

@@ -4,15 +4,18 @@ import (
 	"fmt"
 	"io"
 	"math"
+	"strings"
 
 	"hotfront/optimize"
 	"hotfront/studies"
 )
 
+// near is the share of a bound or of a range that counts as at it.
+const near = 0.01
+
 // Press says what pressed a front: limits that hold it, variables at the ends of their ranges, and why
-// designs failed. near is the share of a bound or range that counts as at it.
-func (f *Front) Press(w io.Writer, failures []optimize.CauseCount) {
-	const near = 0.01
+// designs failed.
+func (f *Front) Press(w io.Writer) {
 	s := f.Problem.Study()
 	n := len(f.Points)
 	for i := range s.Limits {
@@ -52,33 +55,59 @@ func (f *Front) Press(w io.Writer, failures []optimize.CauseCount) {
 		end(low, "lower", v.Low)
 		end(high, "upper", v.High)
 	}
-	for _, c := range failures {
+	f.failures(w)
+}
+
+func (f *Front) failures(w io.Writer) {
+	for _, c := range f.Failures {
 		fmt.Fprintf(w, "%d designs without a result: %s.\n", c.Count, c.Cause)
 	}
 }
 
-// Blame says, of a search that found nothing feasible, which limits its nearest design misses.
-func Blame(w io.Writer, p *studies.Problem, least *optimize.Point, failures []optimize.CauseCount, evaluations int) {
-	s := p.Study()
-	if least == nil {
-		fmt.Fprintf(w, "None of %d designs has a result.\n", evaluations)
-	} else {
-		fmt.Fprintf(w, "None of %d designs meets all limits. The nearest misses:\n", evaluations)
-		perf := p.PerformanceOf(least.Extra)
-		engine := s.EngineAt(least.X)
-		for i, r := range s.LimitResults(&engine, &perf) {
-			if r.Met {
-				continue
-			}
+// Blame says, of a run in which nothing is feasible, which limits are out of reach or contradict each
+// other, and what the nearest design misses.
+func (f *Front) Blame(w io.Writer) {
+	s := f.Problem.Study()
+	if f.Nearest == nil {
+		fmt.Fprintf(w, "None of %d designs has a result.\n", f.Evaluations)
+		f.failures(w)
+		return
+	}
+	fmt.Fprintf(w, "None of %d designs meets all limits.\n", f.Evaluations)
+	blamed := false
+	for i := range f.Reach {
+		if r := &f.Reach[i]; r.Met == 0 {
+			blamed = true
 			l := &s.Limits[i]
-			miss := ""
-			if r.Bound != 0 {
-				miss = fmt.Sprintf(", by %.1f %%", 100*math.Abs(r.Margin/r.Bound))
-			}
-			fmt.Fprintf(w, "  %s is %s %s, to be %s%s\n", l.Name, l.Format(r.Value), unit(l.Unit), l.BoundText(), miss)
+			fmt.Fprintf(w, "No design meets %s (%s); the best on its own is %s with %s%s.\n",
+				l.Name, l.BoundText(), ID(r.Seq), valueText(l, r.Result.Value), missText(r.Result))
 		}
 	}
-	for _, c := range failures {
-		fmt.Fprintf(w, "%d designs without a result: %s.\n", c.Count, c.Cause)
+	if !blamed {
+		fmt.Fprintf(w, "Each limit is met by some designs, but no design meets all: they contradict each other here.\n")
+		for i := range f.Reach {
+			l := &s.Limits[i]
+			fmt.Fprintf(w, "  %s (%s): met by %d\n", l.Name, l.BoundText(), f.Reach[i].Met)
+		}
 	}
+	fmt.Fprintf(w, "The nearest to all, %s, misses:\n", ID(f.NearestSeq))
+	perf, engine := f.Problem.PerformanceOf(f.Nearest.Extra), s.EngineAt(f.Nearest.X)
+	for i, r := range s.LimitResults(&engine, &perf) {
+		if l := &s.Limits[i]; !r.Met {
+			fmt.Fprintf(w, "  %s is %s, to be %s%s\n", l.Name, valueText(l, r.Value), l.BoundText(), missText(r))
+		}
+	}
+	f.failures(w)
+}
+
+func valueText(l *studies.Limit, v float64) string {
+	return strings.TrimSpace(l.Format(v) + " " + unit(l.Unit))
+}
+
+// missText says by what share of its bound a limit is missed.
+func missText(r studies.LimitResult) string {
+	if r.Bound == 0 {
+		return ""
+	}
+	return fmt.Sprintf(", by %.1f %%", 100*math.Abs(r.Margin/r.Bound))
 }
