@@ -32,7 +32,7 @@ type Performance struct {
 	Mach            float64 // largest Mach number in tubes, matrix and ducts [-]
 	HotMetalMass    float64 // heater tubes, regenerator matrix and canisters, hot cylinder [kg]
 
-	HeaterMetalTemperature            float64 // outer tube wall at the flux peak [K]
+	HeaterMetalTemperature            float64 // hottest outer tube wall: at the flux peak, where the gas is coldest [K]
 	HeaterOuterTemperature            float64 // mean outer tube wall [K]
 	HeaterInnerTemperature            float64 // mean inner tube wall [K]
 	HeaterGasTemperature              float64 // time-mean gas in the heated tubes [K]

@@ -19,16 +19,23 @@ const (
 
 // setMetal works out heat flux, metal temperatures and stress of the heater, and the masses.
 //
-// The flux peaks somewhere by FluxPeaking; there the wall stands above the gas by that much more:
+// Round each tube, and from tube to tube, the flux peaks by FluxPeaking; there the wall stands above the gas
+// by that much more,
 //
-//	T = Tgas + FluxPeaking (Touter - Tgas)
+//	T = Tgas + FluxPeaking (Touter - Tgas),
 //
-// for all three resistances (film, wall) carry the local flux.
+// for film and wall carry the local flux. The hottest metal is where the gas is coldest along the tubes.
 func (w *Workspace) setMetal(dst *Performance, e *Engine) {
 	h, g := &e.Heater, &w.geometry
 	heat := w.heat(cycle.PartHeater) * e.Speed
 	dst.HeaterHeatFlux = heat / (float64(h.TubeCount) * pi * g.heaterOuter * h.HeatedLength)
-	dst.HeaterMetalTemperature = dst.HeaterGasTemperature + h.FluxPeaking*(dst.HeaterOuterTemperature-dst.HeaterGasTemperature)
+	coldest := dst.HeaterGasTemperature
+	for i := range w.Path.N {
+		if w.Path.Cells[i].Part == cycle.PartHeater {
+			coldest = min(coldest, w.Cycle.Temperature[i])
+		}
+	}
+	dst.HeaterMetalTemperature = coldest + h.FluxPeaking*(dst.HeaterOuterTemperature-coldest)
 
 	alloy := metal.Of(h.Alloy)
 	tubes := vessel{metal: &alloy, bore: h.TubeBore, wall: h.TubeWall, temperature: dst.HeaterMetalTemperature}

@@ -73,7 +73,7 @@ func Outputs() []Output {
 		{"mach", "largest Mach number in tubes, matrix and ducts", Number, "-", func(p *p) *float64 { return &p.Mach }},
 		{"hot_metal_mass", "heater tubes, regenerator matrix and canisters, hot cylinder", Mass, "kg", func(p *p) *float64 { return &p.HotMetalMass }},
 
-		{"heater.metal_temperature", "outer tube wall at the flux peak", Temperature, "degC", func(p *p) *float64 { return &p.HeaterMetalTemperature }},
+		{"heater.metal_temperature", "hottest outer tube wall: at the flux peak, where the gas is coldest", Temperature, "degC", func(p *p) *float64 { return &p.HeaterMetalTemperature }},
 		{"heater.outer_temperature", "mean outer tube wall", Temperature, "degC", func(p *p) *float64 { return &p.HeaterOuterTemperature }},
 		{"heater.inner_temperature", "mean inner tube wall", Temperature, "degC", func(p *p) *float64 { return &p.HeaterInnerTemperature }},
 		{"heater.gas_temperature", "time-mean gas in the heated tubes", Temperature, "degC", func(p *p) *float64 { return &p.HeaterGasTemperature }},

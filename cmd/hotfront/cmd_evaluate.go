@@ -60,7 +60,11 @@ func (p *program) evaluate(file string, o *evaluateOptions) error {
 		return err
 	}
 	d := report.Design{Study: s, Engine: s.Engine}
-	model.Evaluate(&d.Performance, &d.Engine, &s.Corrections, model.NewWorkspace())
+	production := model.NewWorkspace()
+	model.Evaluate(&d.Performance, &d.Engine, &s.Corrections, production)
+	if d.Performance.Cause == model.None {
+		d.Heater = model.HeaterProfile(nil, &d.Engine, production)
+	}
 	var fine model.Performance
 	w := model.NewWorkspaceGrid(model.SecondLawGrid())
 	model.Evaluate(&fine, &d.Engine, &s.Corrections, w)

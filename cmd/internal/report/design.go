@@ -19,6 +19,7 @@ type Design struct {
 	Engine      model.Engine
 	Performance model.Performance
 	SecondLaw   *model.SecondLaw // may be nil
+	Heater      []model.HeaterCell
 }
 
 // DesignJSON is a Design as JSON holds it: SI, names as `hotfront fields` lists them.
@@ -30,9 +31,19 @@ type DesignJSON struct {
 	Performance map[string]float64 `json:"performance,omitempty"`
 	Losses      map[string]float64 `json:"losses,omitempty"`
 	LostWork    map[string]float64 `json:"lost_work,omitempty"`
+	Heater      []heaterJSON       `json:"heater_along,omitempty"`
 	Limits      []LimitJSON        `json:"limits,omitempty"`
 	Corrections map[string]any     `json:"corrections"`
 	Warnings    []string           `json:"warnings"`
+}
+
+type heaterJSON struct {
+	Position float64 `json:"position"`
+	Outer    float64 `json:"outer_temperature"`
+	Hottest  float64 `json:"hottest_temperature"`
+	Inner    float64 `json:"inner_temperature"`
+	Gas      float64 `json:"gas_temperature"`
+	Flux     float64 `json:"heat_flux"`
 }
 
 // LimitJSON is one limit, SI.
@@ -58,6 +69,9 @@ func (d *Design) JSON() DesignJSON {
 	}
 	j.Performance, j.Losses = Results(d.Study, &d.Performance)
 	j.LostWork = d.lostWork()
+	for _, c := range d.Heater {
+		j.Heater = append(j.Heater, heaterJSON(c))
+	}
 	j.Limits = Limits(d.Study, &d.Engine, &d.Performance)
 	j.Warnings = append(j.Warnings, d.Performance.Warnings.Texts()...)
 	return j
@@ -196,6 +210,9 @@ func (d *Design) Table(w io.Writer, s Style) error {
 		}
 		fmt.Fprintln(w)
 	}
+	if err := d.heater(w, s); err != nil {
+		return err
+	}
 	if err := d.limits(w, s); err != nil {
 		return err
 	}
@@ -290,6 +307,27 @@ func (d *Design) secondLaw(w io.Writer, s Style) error {
 	}
 	table.Rows = append(table.Rows, []string{"shaft work", fmt.Sprintf("%.0f", d.Performance.BrakePower), fmt.Sprintf("%.1f", 100*d.Performance.BrakePower/could)})
 	return table.Write(w, s.Listing())
+}
+
+// heater prints the heater along its tubes.
+func (d *Design) heater(w io.Writer, s Style) error {
+	if len(d.Heater) == 0 {
+		return nil
+	}
+	table := Table{Title: "Heater along the tubes, from the expansion space, time means", Head: [][]string{
+		{"place", "outer wall", "at the flux peak", "inner wall", "gas", "flux"}, {"mm", "degC", "degC", "degC", "degC", "W/cm2"}}}
+	for _, c := range d.Heater {
+		row := []string{fmt.Sprintf("%.0f", 1e3*c.Position)}
+		for _, t := range []float64{c.Outer, c.Hottest, c.Inner, c.Gas} {
+			row = append(row, studies.FormatSI(t, studies.Temperature, "degC", 3))
+		}
+		table.Rows = append(table.Rows, append(row, fmt.Sprintf("%.3g", c.Flux/1e4)))
+	}
+	if err := table.Write(w, Style{Ruled: s.Ruled}); err != nil {
+		return err
+	}
+	_, err := fmt.Fprintln(w)
+	return err
 }
 
 func (d *Design) limits(w io.Writer, s Style) error {
