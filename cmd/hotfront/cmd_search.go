@@ -51,7 +51,7 @@ DIR must be on a local disk: the archive is not safe on network file systems.
 	o.format.add(c)
 	f := c.Flags()
 	f.StringVar(&o.dir, "run", "", "folder of the run, made if it is not there (needed)")
-	f.IntVar(&o.evaluations, "evaluations", 0, "budget instead of the study's; a larger one continues a run")
+	f.IntVar(&o.evaluations, "evaluations", 0, "budget instead of the study's, 0 for the study's; a larger one continues a run")
 	f.Float64Var(&o.hours, "hours", 0, "stop with a checkpoint after this time")
 	f.Uint64Var(&o.seed, "seed", 0, "seed instead of the study's")
 	f.IntVar(&o.workers, "workers", runtime.GOMAXPROCS(0), "designs worked on at a time; does not change the front")
@@ -64,8 +64,10 @@ func (p *program) search(ctx context.Context, file string, o *searchOptions) err
 	switch {
 	case o.dir == "":
 		return failed(exitUsage, "search needs --run DIR, a folder for its archive")
-	case o.evaluations < 0 || o.hours < 0 || o.workers < 1:
-		return failed(exitUsage, "--evaluations and --hours must not be negative, --workers at least 1")
+	case o.evaluations < 0 || o.workers < 1:
+		return failed(exitUsage, "--evaluations must not be negative, --workers at least 1")
+	case !(o.hours >= 0 && o.hours <= mostHours):
+		return failed(exitUsage, fmt.Sprintf("--hours must be from 0 to %d", mostHours))
 	}
 	s, data, err := p.load(file)
 	if err != nil {
@@ -79,7 +81,7 @@ func (p *program) search(ctx context.Context, file string, o *searchOptions) err
 	}
 	problem, err := studies.NewProblem(s)
 	if err != nil {
-		return failed(exitStudy, err.Error())
+		return p.noProblem(file, err)
 	}
 	driver, err := chooseDriver(o.driver, problem)
 	if err != nil {
@@ -92,6 +94,9 @@ func (p *program) search(ctx context.Context, file string, o *searchOptions) err
 	err = p.searchIn(ctx, run, problem, driver, o)
 	return errors.Join(err, run.Close())
 }
+
+// mostHours is a century: more than a search runs, less than a duration holds.
+const mostHours = 876000
 
 // chooseDriver takes the simplex driver for one aim over numbers: there it is the better one.
 func chooseDriver(name string, p *studies.Problem) (optimize.Driver, error) {

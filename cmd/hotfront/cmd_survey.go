@@ -78,7 +78,7 @@ func (p *program) survey(ctx context.Context, file string, o *surveyOptions) err
 	}
 	problem, err := studies.NewProblem(s)
 	if err != nil {
-		return failed(exitStudy, err.Error())
+		return p.noProblem(file, err)
 	}
 	points := spread(problem, o.designs, o.seed)
 	ctx, release := withSignals(ctx, p.err)
@@ -87,12 +87,16 @@ func (p *program) survey(ctx context.Context, file string, o *surveyOptions) err
 	pool := batch.NewPool(o.workers,
 		func() func(*optimize.Point) { return problem.NewEvaluator().Evaluate },
 		func(pt *optimize.Point, cause string) { pt.Cause = cause })
-	if done := pool.Run(ctx, points); done < len(points) {
-		return failed(exitInterrupted, fmt.Sprintf("stopped after %d of %d designs", done, len(points)))
-	}
+	done := pool.Run(ctx, points)
+	stopped := done < len(points)
+	points = points[:done]
 	r := surveyResult(problem, points)
 	r.DesignsPerSecond = math.Round(float64(len(points)) / time.Since(start).Seconds())
-	return p.printSurvey(&r, o.format)
+	err = p.printSurvey(&r, o.format)
+	if err == nil && stopped {
+		return failed(exitInterrupted, fmt.Sprintf("interrupted: this is the survey of the first %d of %d designs", done, o.designs))
+	}
+	return err
 }
 
 // spread gives points of a Latin hypercube over the problem's variables.

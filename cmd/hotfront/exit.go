@@ -10,7 +10,7 @@ const (
 	exitStudy       = 3   // the study is not valid
 	exitInfeasible  = 4   // no design meets all limits
 	exitStopped     = 75  // stopped with a checkpoint; run it again to go on
-	exitInterrupted = 130 // stopped at once by a second signal
+	exitInterrupted = 130 // interrupted with nothing to go on from, or by a second signal
 )
 
 const exitHelp = `Exit codes:
@@ -20,7 +20,7 @@ const exitHelp = `Exit codes:
     3  the study is not valid
     4  no design meets all limits
    75  stopped with a checkpoint; the same command goes on
-  130  stopped at once by a second signal`
+  130  interrupted: by a second signal, or where there is nothing to go on from`
 
 // exitError carries an exit code; with an empty text everything has been said already.
 type exitError struct {

@@ -100,6 +100,12 @@ func (p *program) profile() error {
 	return nil
 }
 
+// noProblem says why a valid study cannot be searched.
+func (p *program) noProblem(file string, err error) error {
+	text := strings.TrimPrefix(err.Error(), "studies: make problem: ")
+	return failed(exitStudy, fmt.Sprintf("%s: %s; see what it asks for by hotfront check, or work out its start design by hotfront evaluate", file, text))
+}
+
 // arguments asks for exactly these arguments, by name.
 func arguments(names ...string) cobra.PositionalArgs {
 	return func(c *cobra.Command, args []string) error {
