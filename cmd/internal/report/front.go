@@ -255,7 +255,7 @@ func (f *Front) gains(w io.Writer, picked []int, style Style) error {
 	}
 	if len(s.Limits) > 0 {
 		names, units = append(names, "nearest limit"), append(units, "")
-		table.Left, table.Wrap = []int{len(shown) + 1}, []int{len(shown) + 1}
+		table.Left = []int{len(shown) + 1}
 	}
 	table.Head = headings(names, units)
 	for _, k := range picked {
