@@ -22,10 +22,10 @@ type searchOptions struct {
 	evaluations int
 	hours       float64
 	seed        uint64
-	seedGiven   bool
 	workers     int
 	driver      string
 	top         top
+	seedGiven   bool
 }
 
 func (p *program) searchCommand() *cobra.Command {
@@ -64,8 +64,8 @@ func (p *program) search(ctx context.Context, file string, o *searchOptions) err
 	switch {
 	case o.dir == "":
 		return failed(exitUsage, "search needs --run DIR, a folder for its archive")
-	case o.evaluations < 0 || o.workers < 1:
-		return failed(exitUsage, "--evaluations must not be negative, --workers at least 1")
+	case o.evaluations < 0 || o.evaluations > mostEvaluations || o.workers < 1:
+		return failed(exitUsage, fmt.Sprintf("--evaluations must be from 0 to %d, --workers at least 1", int(mostEvaluations)))
 	case !(o.hours >= 0 && o.hours <= mostHours):
 		return failed(exitUsage, fmt.Sprintf("--hours must be from 0 to %d", mostHours))
 	}
@@ -94,6 +94,9 @@ func (p *program) search(ctx context.Context, file string, o *searchOptions) err
 	err = p.searchIn(ctx, run, problem, driver, o)
 	return errors.Join(err, run.Close())
 }
+
+// mostEvaluations is the largest budget, as in a study.
+const mostEvaluations = 1e9
 
 // mostHours is a century: more than a search runs, less than a duration holds.
 const mostHours = 876000
@@ -140,12 +143,13 @@ func (p *program) searchIn(ctx context.Context, run *archive.Archive, problem *s
 	s := problem.Study()
 	ctx, release := withSignals(ctx, p.err)
 	defer release()
+	pr := newProgress(p.err, problem, s.Evaluations)
 	if o.hours > 0 {
 		var cancel context.CancelFunc
 		ctx, cancel = context.WithTimeout(ctx, time.Duration(o.hours*float64(time.Hour)))
 		defer cancel()
+		pr.deadline, _ = ctx.Deadline()
 	}
-	pr := newProgress(p.err, problem, s.Evaluations)
 	before, err := run.Len()
 	if err != nil {
 		return err

@@ -25,7 +25,8 @@ type progress struct {
 	budget   int
 	start    time.Time
 	last     time.Time
-	first    int // designs recalled before the first was evaluated
+	first    int       // designs recalled before the first was evaluated
+	deadline time.Time // when --hours end; zero for never
 }
 
 func newProgress(w io.Writer, p *studies.Problem, budget int) *progress {
@@ -62,13 +63,17 @@ func (pr *progress) observe(s optimize.Progress) {
 	rate := float64(s.Evaluations-pr.first) / max(now.Sub(pr.start).Seconds(), 1e-9)
 	left := "-"
 	if rate > 0 {
-		left = (time.Duration(float64(pr.budget-s.Evaluations) / rate * float64(time.Second))).Round(time.Second).String()
+		rest := time.Duration(float64(pr.budget-s.Evaluations) / rate * float64(time.Second))
+		if !pr.deadline.IsZero() {
+			rest = min(rest, pr.deadline.Sub(now))
+		}
+		left = max(0, rest).Round(time.Second).String()
 	}
 	feasible := 100 * float64(s.Feasible) / float64(max(s.Evaluations, 1))
 	hypervolume := report.HypervolumeText(pr.problem, s.Hypervolume)
 	if pr.terminal {
-		line := fmt.Sprintf("%d of %d designs  %.0f/s  %.0f %% feasible  front %d  hypervolume %s  %s left",
-			s.Evaluations, pr.budget, rate, feasible, s.Front, hypervolume, left)
+		line := fmt.Sprintf("%d of %d designs  %s left  %.0f/s  %.0f %% feasible  front %d  hypervolume %s",
+			s.Evaluations, pr.budget, left, rate, feasible, s.Front, hypervolume)
 		fmt.Fprintf(pr.w, "\r\x1b[K%.*s", max(20, pr.width()-1), line)
 		return
 	}

@@ -150,6 +150,14 @@ func (d *Design) CSV(w io.Writer) error {
 		}
 		rows = append(rows, []string{part, name, o.Format(o.Get(&d.Performance)), unit(o.Unit)})
 	}
+	for i, r := range d.Study.LimitResults(&d.Engine, &d.Performance) {
+		l := &d.Study.Limits[i]
+		met := "yes"
+		if !r.Met {
+			met = "no"
+		}
+		rows = append(rows, []string{"limits", r.Name, l.Format(r.Value), unit(l.Unit)}, []string{"met", r.Name, met, ""})
+	}
 	return CSV(w, []string{"part", "name", "value", "unit"}, rows)
 }
 

@@ -141,7 +141,8 @@ func (f *Front) at(i int) (model.Engine, model.Performance) {
 	return s.EngineAt(f.Points[i].X), f.Problem.PerformanceOf(f.Points[i].Extra)
 }
 
-// CSV writes the members picked: id, free variables, results; units in the head.
+// CSV writes the members picked: id, free variables to the digits that make the design again, results and
+// formulas of limits; units in the head.
 func (f *Front) CSV(w io.Writer, picked []int) error {
 	s := f.Problem.Study()
 	outputs := s.Outputs()
@@ -153,6 +154,11 @@ func (f *Front) CSV(w io.Writer, picked []int) error {
 	for i := range outputs {
 		head = append(head, headed(outputs[i].Name, outputs[i].Unit))
 	}
+	for i := range s.Limits {
+		if l := &s.Limits[i]; l.Expr != "" {
+			head = append(head, headed(l.Name, l.Unit))
+		}
+	}
 	var rows [][]string
 	for _, k := range picked {
 		e, p := f.at(k)
@@ -163,12 +169,25 @@ func (f *Front) CSV(w io.Writer, picked []int) error {
 		}
 		for i := range outputs {
 			o := &outputs[i]
-			row = append(row, strconv.FormatFloat(studies.FromSI(o.Get(&p), o.Quantity, o.Unit), 'g', 8, 64))
+			row = append(row, resultCSV(studies.FromSI(o.Get(&p), o.Quantity, o.Unit)))
+		}
+		for i := range s.Limits {
+			l := &s.Limits[i]
+			switch v := l.Value(&e, &p); {
+			case l.Expr == "":
+			case l.Unit == "":
+				row = append(row, resultCSV(v))
+			default:
+				row = append(row, resultCSV(studies.FromSI(v, l.Quantity, l.Unit)))
+			}
 		}
 		rows = append(rows, row)
 	}
 	return CSV(w, head, rows)
 }
+
+// resultCSV writes a result to more digits than it is worth, so that rounding adds nothing to a plot.
+func resultCSV(v float64) string { return strconv.FormatFloat(v, 'g', 6, 64) }
 
 func exact(field *studies.Field, e *model.Engine) string {
 	if field.Kind == studies.Real {
