@@ -288,3 +288,21 @@ func writeForever(t *testing.T, dir string) {
 		}
 	}
 }
+
+// BenchmarkRecord stores batches of 60 designs; each is durable before the next.
+func BenchmarkRecord(b *testing.B) {
+	a := open(b, b.TempDir())
+	defer a.Close()
+	batch := make([]optimize.Point, 60)
+	for i := range batch {
+		batch[i] = point(5 * i) // with a result
+	}
+	first := 0
+	for b.Loop() {
+		if err := a.Record(first, batch); err != nil {
+			b.Fatal(err)
+		}
+		first += len(batch)
+	}
+	b.ReportMetric(float64(first)/b.Elapsed().Seconds(), "designs/s")
+}
