@@ -52,6 +52,14 @@ func Open(dir string, m Meta) (*Archive, error) {
 }
 
 func openLocked(dir string, m Meta) (*Archive, error) {
+	file := filepath.Join(dir, FileName)
+	if info, err := os.Stat(file); err == nil {
+		if err := whole(file, info); err != nil {
+			return nil, err
+		}
+	} else if !errors.Is(err, fs.ErrNotExist) {
+		return nil, explain("open", file, err)
+	}
 	a, err := connect(dir, "rwc")
 	if err != nil {
 		return nil, err
@@ -75,10 +83,18 @@ func openLocked(dir string, m Meta) (*Archive, error) {
 // Read opens the run in a folder for reading.
 func Read(dir string) (*Archive, error) {
 	file := filepath.Join(dir, FileName)
-	if _, err := os.Stat(file); errors.Is(err, fs.ErrNotExist) {
+	f, err := os.Open(file) // the database does not tell what may not be read from what may not be written
+	if errors.Is(err, fs.ErrNotExist) {
 		return nil, fmt.Errorf("%w: %s", ErrNoRun, dir)
 	} else if err != nil {
-		return nil, explain("open", file, err)
+		return nil, fmt.Errorf("archive: read: %w", err)
+	}
+	info, err := f.Stat()
+	if err := errors.Join(err, f.Close()); err != nil {
+		return nil, fmt.Errorf("archive: read: %w", err)
+	}
+	if err := whole(file, info); err != nil {
+		return nil, err
 	}
 	// A reader helps itself to the write-ahead file, for which it must write to the folder. Where that
 	// is not possible and there is no such file, the archive cannot change and is read as it is.
@@ -121,6 +137,25 @@ func openReading(dir, mode string) (*Archive, error) {
 		return nil, errors.Join(err, a.db.Close())
 	}
 	return a, nil
+}
+
+// whole refuses what cannot be an archive by its kind or size. SQLite takes a part of a page for a page
+// with blanks: a file that lost its end could read as one of fewer designs. Only the write-ahead file or a
+// journal, which mend it, may stand beside such a file.
+func whole(file string, info fs.FileInfo) error {
+	const pageSize = 4096 // SQLite's default
+	if info.IsDir() {
+		return &DamagedError{File: file, What: "it is a folder"}
+	}
+	if info.Size()%pageSize == 0 {
+		return nil
+	}
+	for _, suffix := range []string{"-wal", "-journal"} {
+		if _, err := os.Stat(file + suffix); err == nil {
+			return nil
+		}
+	}
+	return &DamagedError{File: file, What: "not a whole database"}
 }
 
 // connect opens the database on one connection. mode is SQLite's, with further parameters behind &.
