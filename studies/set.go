@@ -17,6 +17,7 @@ func (r *reader) overrides(sets []string) {
 		}
 		s := scalar{text: text, place: p}
 		name, isFactor := strings.CutPrefix(path, "corrections.")
+		path = strings.TrimPrefix(path, "engine.") // as messages about the file name it
 		f, isInput := FieldNamed(r.fields, path)
 		switch {
 		case !ok || path == "" || text == "":

@@ -146,10 +146,10 @@ func (f *format) Set(s string) error {
 func (p *program) style() report.Style {
 	if f, ok := p.out.(*os.File); ok && term.IsTerminal(int(f.Fd())) {
 		width, _, err := term.GetSize(int(f.Fd()))
-		if err != nil || width < 40 {
+		if err != nil {
 			width = 80
 		}
-		return report.Style{Ruled: true, Width: width}
+		return report.Style{Ruled: true, Width: max(width, 40)}
 	}
 	return report.Style{Width: 120}
 }
@@ -172,10 +172,17 @@ func read(file string, sets ...string) (*studies.Study, []byte, studies.Issues, 
 	s, issues := studies.Load(file, data, sets...)
 	if s == nil {
 		text := "1 mistake"
-		if n := len(issues.Mistakes()); n > 1 {
+		mistakes := issues.Mistakes()
+		if n := len(mistakes); n > 1 {
 			text = fmt.Sprintf("%d mistakes", n)
 		}
-		return nil, nil, issues, failed(exitStudy, file+" is not valid: "+text)
+		what := "what --set asks for" // unless the file has a mistake of its own
+		for i := range mistakes {
+			if !strings.HasPrefix(mistakes[i].File, "--set") {
+				what = file
+			}
+		}
+		return nil, nil, issues, failed(exitStudy, what+" is not valid: "+text)
 	}
 	return s, data, issues, nil
 }
