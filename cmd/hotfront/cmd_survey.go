@@ -202,6 +202,6 @@ func (p *program) printSurvey(r *surveyJSON, as format) error {
 	if as == "csv" {
 		return report.CSV(p.out, []string{"what", "value", "share"}, rows)
 	}
-	table := report.Table{Title: r.Study, Head: [][]string{{"what", "value", "share"}}, Rows: rows}
+	table := report.Table{Title: r.Study, Head: [][]string{{"what", "value", "share"}}, Rows: rows, Wrap: []int{0}}
 	return table.Write(p.out, p.style().Listing())
 }

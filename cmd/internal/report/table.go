@@ -263,7 +263,11 @@ func (t *Table) part(w io.Writer, s Style, start, end int) error {
 		return err
 	}
 	for line := range strings.Lines(text.String()) {
-		if _, err := io.WriteString(w, strings.TrimRight(line, " \n")+"\n"); err != nil {
+		line = strings.TrimRight(line, " \n")
+		if s.Ruled && len(line) > gap && strings.Trim(line, "-") == "" {
+			line = line[gap:] // the rule is drawn below the blanks behind the last column too
+		}
+		if _, err := io.WriteString(w, line+"\n"); err != nil {
 			return err
 		}
 	}
