@@ -61,7 +61,7 @@ func under(dir, tree string) bool { return dir == tree || strings.HasPrefix(dir,
 // files, logs, flags, YAML and SQL out of the numerical packages.
 func TestImports(t *testing.T) {
 	list, _ := sources(t)
-	io := map[string]bool{"os": true, "log": true, "log/slog": true, "net": true, "net/http": true, "os/exec": true, "database/sql": true}
+	outside := []string{"os", "log", "net", "io/ioutil", "syscall", "database/sql", "flag", "github.com/spf13", "go.yaml.in", "gopkg.in/yaml", "modernc.org"}
 	for _, s := range list {
 		if s.test {
 			continue
@@ -69,8 +69,10 @@ func TestImports(t *testing.T) {
 		numerical := under(s.dir, "model") || under(s.dir, "optimize") && !under(s.dir, "optimize/archive")
 		for _, imp := range s.file.Imports {
 			path := strings.Trim(imp.Path.Value, `"`)
-			if numerical && (io[path] || strings.Contains(path, "cobra") || strings.Contains(path, "yaml") || strings.Contains(path, "sqlite")) {
-				t.Errorf("%s imports %s", s.path, path)
+			for _, tree := range outside {
+				if numerical && under(path, tree) {
+					t.Errorf("%s imports %s", s.path, path)
+				}
 			}
 			ours, ok := strings.CutPrefix(path, "hotfront/")
 			if !ok {
