@@ -48,7 +48,8 @@ func SeqOf(id string) (int, bool) {
 	return int(seq), ok && err == nil
 }
 
-// Pick gives the k members that together dominate most, in the order of the front; all for k <= 0.
+// Pick gives the k members that together dominate most, in the order of the front; all for k <= 0. Members
+// beyond the reference point dominate nothing there: they fill what is left, spread over the front.
 func (f *Front) Pick(k int) []int {
 	all := make([]int, len(f.Points))
 	aims := make([][]float64, len(f.Points))
@@ -59,6 +60,12 @@ func (f *Front) Pick(k int) []int {
 		return all
 	}
 	picked := pareto.Choose(aims, f.Problem.Reference(), k)
+	if missing := k - len(picked); missing > 0 {
+		rest := slices.DeleteFunc(all, func(i int) bool { return slices.Contains(picked, i) })
+		for j := range missing {
+			picked = append(picked, rest[j*len(rest)/missing])
+		}
+	}
 	slices.Sort(picked)
 	return picked
 }
@@ -211,7 +218,10 @@ func (f *Front) Report(w io.Writer, picked []int, style Style, version string) e
 	if err := f.Table(w, picked, style); err != nil {
 		return err
 	}
-	fmt.Fprintf(w, "\nHypervolume over the run: %s designs.\n", f.Growth())
+	fmt.Fprintln(w)
+	if growth := f.Growth(); growth != "" {
+		fmt.Fprintf(w, "Hypervolume over the run: %s designs.\n", growth)
+	}
 	f.Press(w)
 	_, err := fmt.Fprintf(w, "%s Model version %s.\n%s\n", correctionsText(s), version, Caution)
 	return err
