@@ -61,7 +61,12 @@ func ReadTests(file string, tests []byte, studyFile string, study []byte) ([]Row
 		if errors.Is(err, io.EOF) {
 			break
 		}
-		line, _ := r.FieldPos(0)
+		var line int
+		if broken, ok := errors.AsType[*csv.ParseError](err); ok { // no field has a place then
+			line, err = broken.Line, broken.Err
+		} else {
+			line, _ = r.FieldPos(0)
+		}
 		if err == nil && len(cells) != len(head) {
 			err = fmt.Errorf("%d cells, the head has %d", len(cells), len(head))
 		}
