@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"io/fs"
 	"os"
+	"regexp"
 	"slices"
 	"strings"
 	"time"
@@ -33,7 +34,7 @@ the engine; factors that are not fitted stay as its corrections say. FILE.csv ha
 
   quantity     a result as in 'hotfront fields', or ` + calibration.BestSpeed + `
   value        with its unit
-  uncertainty  in the unit of the value or in %; 3 % when empty
+  uncertainty  in the unit of the value, or in % of it (in points where the value itself is in %); 3 % of it when empty
   note         passed over
   any input    by its path, as gas, charge_pressure, speed, heat.tube_gas: replaces that of the study
 
@@ -61,6 +62,14 @@ func (p *program) calibrate(file string, o *calibrateOptions) error {
 	if err != nil {
 		return err
 	}
+	if o.name == "" {
+		o.name = s.Name
+	}
+	if o.out != "" {
+		if err := o.checkOut(file); err != nil {
+			return err
+		}
+	}
 	tests, err := os.ReadFile(o.tests)
 	if err != nil {
 		return err
@@ -73,9 +82,6 @@ func (p *program) calibrate(file string, o *calibrateOptions) error {
 	if err != nil {
 		return err
 	}
-	if o.name == "" {
-		o.name = s.Name
-	}
 	switch o.format {
 	case "json":
 		err = report.JSON(p.out, report.CalibrationJSON(outcome))
@@ -86,9 +92,6 @@ func (p *program) calibrate(file string, o *calibrateOptions) error {
 	}
 	if err != nil || o.out == "" {
 		return err
-	}
-	if slices.Contains([]string{"none", "rig"}, o.name) && !strings.Contains(file, "ground-power-unit") {
-		return failed(exitUsage, fmt.Sprintf("%q is the name of a shipped set; give another by --name", o.name))
 	}
 	text := calibration.SetFile(outcome, o.name, file, o.tests, time.Now().UTC())
 	f, err := os.OpenFile(o.out, os.O_WRONLY|os.O_CREATE|os.O_EXCL, 0o666)
@@ -102,4 +105,18 @@ func (p *program) calibrate(file string, o *calibrateOptions) error {
 	}
 	fmt.Fprintf(p.err, "wrote %s\n", o.out)
 	return f.Close()
+}
+
+// checkOut refuses a name or a file for the corrections before any work is done for them.
+func (o *calibrateOptions) checkOut(study string) error {
+	if !regexp.MustCompile(`^[A-Za-z0-9][A-Za-z0-9_-]*$`).MatchString(o.name) {
+		return failed(exitUsage, fmt.Sprintf("%q is no name for a set of corrections: letters, digits, - and _; give one by --name", o.name))
+	}
+	if slices.Contains([]string{"none", "rig"}, o.name) && !strings.Contains(study, "ground-power-unit") {
+		return failed(exitUsage, fmt.Sprintf("%q is the name of a shipped set; give another by --name", o.name))
+	}
+	if _, err := os.Stat(o.out); err == nil {
+		return fmt.Errorf("%s is there already", o.out)
+	}
+	return nil
 }

@@ -52,7 +52,7 @@ func (p *program) evaluate(file string, o *evaluateOptions) error {
 	var s *studies.Study
 	var err error
 	if o.design != "" {
-		s, err = runDesign(file, o.design, sets)
+		s, err = p.runDesign(file, o.design, sets)
 	} else {
 		s, _, err = p.load(file, sets...)
 	}
@@ -87,7 +87,7 @@ func (p *program) evaluate(file string, o *evaluateOptions) error {
 }
 
 // runDesign gives the study of a run with one of its designs as the start design. sets come on top.
-func runDesign(dir, id string, sets []string) (s *studies.Study, err error) {
+func (p *program) runDesign(dir, id string, sets []string) (s *studies.Study, err error) {
 	seq, ok := report.SeqOf(id)
 	if !ok {
 		return nil, failed(exitUsage, fmt.Sprintf("%q is no name of a design, as d000123", id))
@@ -108,6 +108,9 @@ func runDesign(dir, id string, sets []string) (s *studies.Study, err error) {
 	if n == 0 {
 		return nil, failed(exitUsage, fmt.Sprintf("%s has no design %s", dir, id))
 	}
+	if stored := run.Meta().Model; stored != model.Version {
+		fmt.Fprintf(p.err, "warning: the run was worked out by version %s of the model, this is version %s: results differ from the run's\n", stored, model.Version)
+	}
 	engine := s.EngineAt(points[0].X)
 	var all []string
 	for _, v := range s.Design(&engine) {
@@ -119,9 +122,10 @@ func runDesign(dir, id string, sets []string) (s *studies.Study, err error) {
 			all = append(all, v.Field.Path+"="+strconv.FormatFloat(v.SI, 'f', -1, 64))
 		}
 	}
-	s, err = storedStudy(run.Meta(), append(all, sets...)...)
-	if s != nil {
-		s.Name += " " + id
+	s, issues := studies.Load("the study of the run", []byte(run.Meta().Canonical), append(all, sets...)...)
+	if s == nil {
+		return nil, failed(exitStudy, issues.Error())
 	}
-	return s, err
+	s.Name += " " + id
+	return s, nil
 }

@@ -1,6 +1,7 @@
 package archive
 
 import (
+	"bufio"
 	"bytes"
 	"errors"
 	"math"
@@ -233,26 +234,33 @@ func TestKilledWriter(t *testing.T) {
 	for range 3 {
 		cmd := exec.Command(os.Args[0], "-test.run", "^TestKilledWriter$")
 		cmd.Env = append(os.Environ(), "HOTFRONT_TEST_WRITER="+dir)
-		var out bytes.Buffer
-		cmd.Stdout = &out
+		out, err := cmd.StdoutPipe()
+		if err != nil {
+			t.Fatal(err)
+		}
 		if err := cmd.Start(); err != nil {
 			t.Fatal(err)
 		}
-		time.Sleep(time.Duration(150+random.IntN(250)) * time.Millisecond)
-		if err := cmd.Process.Kill(); err != nil {
-			t.Fatal(err)
-		}
-		_ = cmd.Wait() // killed
+		// Kill it some time after it has begun to record, and take what it said until then.
 		said := 0
-		for line := range strings.Lines(out.String()) {
-			if n, ok := strings.CutPrefix(line, "recorded "); ok && strings.HasSuffix(line, "\n") {
-				v, err := strconv.Atoi(strings.TrimSpace(n))
-				if err != nil {
-					t.Fatal(err)
-				}
-				said = v
+		lines := bufio.NewReader(out)
+		for {
+			line, err := lines.ReadString('\n')
+			if err != nil { // the end, in the middle of a line it may be
+				break
+			}
+			n, ok := strings.CutPrefix(line, "recorded ")
+			if !ok {
+				continue
+			}
+			if said == 0 {
+				time.AfterFunc(time.Duration(random.IntN(250))*time.Millisecond, func() { _ = cmd.Process.Kill() })
+			}
+			if said, err = strconv.Atoi(strings.TrimSpace(n)); err != nil {
+				t.Fatal(err)
 			}
 		}
+		_ = cmd.Wait() // killed
 		a := open(t, dir)
 		n, err := a.Len()
 		if err != nil || n < said || n%8 != 0 {
