@@ -14,9 +14,10 @@ const (
 	TooLittleAir             // excess-air ratio below 1
 	TemperatureRange         // a temperature outside the range of the gas properties
 	BankImpossible           // pitches, tubes or fins of the bank that cannot be made
+	PitchRange               // pitches of an in-line bank outside its law
 	ReynoldsRange            // Reynolds number of the bank outside its law
 	TransferImpossible       // effectiveness that no number of transfer units reaches
-	TooCold                  // the heat source cannot give this heat at this temperature
+	TooCold                  // the heat source is too cold for this heat and temperature
 	NoConvergence            // an iteration did not settle
 	LossFree                 // nothing limits the temperature of the receiver
 )
@@ -42,12 +43,14 @@ func (f Fault) String() string {
 		return "temperature outside the range of the gas properties"
 	case BankImpossible:
 		return "pitches, tubes or fins of the tube bank cannot be made"
+	case PitchRange:
+		return "in-line tube bank with transverse pitch below 0.7 of the longitudinal: outside its law"
 	case ReynoldsRange:
 		return "Reynolds number of the tube bank outside its law"
 	case TransferImpossible:
 		return "effectiveness that no heat exchanger reaches"
 	case TooCold:
-		return "heat source cannot give this heat at this temperature"
+		return "heat source too cold for this heat and temperature"
 	case NoConvergence:
 		return "balance of the heat source not found"
 	case LossFree:

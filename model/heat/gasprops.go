@@ -152,3 +152,9 @@ func (c *Combustion) GasTransport(T float64) (mu, k, Pr float64, fault Fault) {
 	mu, k = c.transport.at(T)
 	return mu, k, mu * c.gas.cp(T) / (c.GasMass * k), OK
 }
+
+// prandtl gives the Prandtl number of the flue gas without a check of the range.
+func (c *Combustion) prandtl(T float64) float64 {
+	mu, k := c.transport.at(T)
+	return mu * c.gas.cp(T) / (c.GasMass * k)
+}
