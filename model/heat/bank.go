@@ -101,6 +101,9 @@ func (b *Bank) geometry() (g bankGeometry, fault Fault) {
 			}
 			per := b.Length / f.Pitch
 			R := r + height + t/2
+			if R > finRatioHigh*r {
+				return g, FinRange
+			}
 			g.fin = tubes * per * 2 * math.Pi * (R*R - r*r)
 			g.bare = g.plain * (1 - t/f.Pitch)
 			g.area -= n * per * t * 2 * height
@@ -217,7 +220,8 @@ func bankLine(a Arrangement, i int, x, pitches float64) float64 {
 	return math.Log(c[i]) + m[i]*x
 }
 
-// conductance gives the film conductance [W/K] between gas and tubes with the fins, from the film coefficient h:
+// conductance gives the film conductance [W/K] between gas and tubes with the fins, from the film coefficient h, and the
+// efficiency of the fins (1 without):
 //
 //	UA = h (A_bare + eta A_fin)
 //
@@ -225,13 +229,13 @@ func bankLine(a Arrangement, i int, x, pitches float64) float64 {
 // not confirmed by measurements on finned banks.
 //
 // Source: [Incropera2007], section 3.6
-func (b *Bank) conductance(g *bankGeometry, h float64) float64 {
-	f := &b.Fins
-	switch f.Kind {
+func (b *Bank) conductance(g *bankGeometry, h float64) (UA, eta float64) {
+	eta = 1
+	switch f := &b.Fins; f.Kind {
 	case AnnularFins:
-		return h * (g.bare + g.fin*AnnularFin(h, f.Conductivity, f.Thickness, b.Diameter/2, f.Height))
+		eta = annularFin(h, f.Conductivity, f.Thickness, b.Diameter/2, f.Height)
 	case LongitudinalFins:
-		return h * (g.bare + g.fin*StraightFin(h, f.Conductivity, f.Thickness, f.Height))
+		eta = StraightFin(h, f.Conductivity, f.Thickness, f.Height)
 	}
-	return h * g.bare
+	return h * (g.bare + eta*g.fin), eta
 }

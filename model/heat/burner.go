@@ -55,6 +55,7 @@ type Balance struct {
 
 	Film          float64 // film coefficient in the bank, without radiation [W/(m2 K)]
 	Conductance   float64 // of the bank with fins, without radiation [W/K]
+	FinEfficiency float64 // [-]; 1 without fins
 	Reynolds      float64 // in the bank, on the tube diameter [-]
 	TransferUnits float64 // of the bank [-]
 	PreheaterNTU  float64 // number of transfer units of the preheater [-]; 0 if its effectiveness is given as 1 (infinite)
@@ -112,7 +113,7 @@ func (b *Burner) Combustion() *Combustion { return &b.combustion }
 //
 // falls with Tg everywhere, because the preheater gives back no more than the flue gas loses. It is solved by Newton's
 // method kept in a bracket, to rounding. With tubes hotter than the gas, heat flows from them and Heat is
-// negative. Fuel power that drives the bank out of its law is ReynoldsRange; a gas below 300 K before the bank is
+// negative. Fuel power that drives the bank out of its law is ReynoldsRange, annular fins out of theirs FinRange; a gas below 300 K before the bank is
 // TooCold, one above 5000 K TemperatureRange.
 //
 // Derivation: energy balance of the parts; the stirred chamber [SiegelHowell1992], from memory.
@@ -186,6 +187,9 @@ func Solve(dst *Balance, b *Burner, fuelPower, Tw float64) Fault {
 	if !(behind.reynolds >= bankLow && behind.reynolds <= bankHigh) {
 		return ReynoldsRange
 	}
+	if b.Bank.Fins.Kind == AnnularFins && !(behind.fin >= finEfficiencyLow) {
+		return FinRange
+	}
 
 	flow := dst.FuelFlow
 	dst.GasTemperature = Tg
@@ -196,7 +200,7 @@ func Solve(dst *Balance, b *Burner, fuelPower, Tw float64) Fault {
 	dst.Casing = b.CasingShare*fuelPower + b.CasingConductance*(Tg-b.Ambient)
 	dst.Preheat = flow * behind.preheat
 	dst.Efficiency = dst.Heat / fuelPower
-	dst.Film, dst.Conductance = behind.film, behind.conductance
+	dst.Film, dst.Conductance, dst.FinEfficiency = behind.film, behind.conductance, behind.fin
 	dst.TransferUnits = behind.units
 	dst.PreheaterNTU = behind.preheaterNTU
 
@@ -222,6 +226,7 @@ type passage struct {
 	exit         float64 // temperature behind the bank [K]
 	film         float64 // [W/(m2 K)]
 	conductance  float64 // [W/K]
+	fin          float64 // efficiency of the fins
 	reynolds     float64
 	units        float64
 	preheat      float64 // per mass of fuel [J/kg]
@@ -250,7 +255,7 @@ func (b *Burner) pass(p *passage, flow, Tg, Tw float64) Fault {
 		p.reynolds = speed * b.Bank.Diameter / mu
 		Nu := bankNusselt(b.Bank.Arrangement, p.reynolds, Pr, Prw, g.pitches)
 		p.film = g.rows * Nu * k / b.Bank.Diameter
-		p.conductance = b.Bank.conductance(g, p.film)
+		p.conductance, p.fin = b.Bank.conductance(g, p.film)
 		p.units = p.conductance / (flow * c.GasCp(Tm))
 		decay = math.Exp(-p.units)
 		next := Tw + (Tg-Tw)*decay

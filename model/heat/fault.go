@@ -16,6 +16,7 @@ const (
 	BankImpossible           // pitches, tubes or fins of the bank that cannot be made
 	PitchRange               // pitches of an in-line bank outside its law
 	ReynoldsRange            // Reynolds number of the bank outside its law
+	FinRange                 // annular fins outside the approximation of their efficiency
 	TransferImpossible       // effectiveness that no number of transfer units reaches
 	TooCold                  // the heat source is too cold for this heat and temperature
 	NoConvergence            // an iteration did not settle
@@ -47,6 +48,8 @@ func (f Fault) String() string {
 		return "in-line tube bank with transverse pitch below 0.7 of the longitudinal: outside its law"
 	case ReynoldsRange:
 		return "Reynolds number of the tube bank outside its law"
+	case FinRange:
+		return "annular fins less than half effective or too high for the approximation of their efficiency"
 	case TransferImpossible:
 		return "effectiveness that no heat exchanger reaches"
 	case TooCold:
