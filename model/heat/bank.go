@@ -33,6 +33,7 @@ type bankGeometry struct {
 	frontal  float64 // of the first row, tubes and gaps [m2]
 	rows     float64 // correction for few rows [-]
 	pitches  float64 // transverse over longitudinal pitch [-]
+	law      bankLaw
 	prepared bool
 }
 
@@ -53,27 +54,29 @@ func (b *Bank) geometry() (g bankGeometry, fault Fault) {
 	if !(b.FlowArea >= 0 && finite(b.FlowArea)) {
 		return g, BadNumber
 	}
-	width := b.TransversePitch - b.Diameter
-	if !(width > 0) {
-		return g, BankImpossible
-	}
-	SD := math.Inf(1)
+	// width is the narrowest passage per tube, nearest the distance of the axes of the closest tubes.
+	width, nearest := b.TransversePitch-b.Diameter, b.TransversePitch
 	if b.Rows > 1 {
 		if !(b.LongitudinalPitch > 0 && finite(b.LongitudinalPitch)) {
 			return g, BadNumber
 		}
 		g.pitches = b.TransversePitch / b.LongitudinalPitch
 		if b.Arrangement == Staggered {
-			SD = math.Hypot(b.LongitudinalPitch, b.TransversePitch/2)
+			SD := math.Hypot(b.LongitudinalPitch, b.TransversePitch/2)
 			width = min(width, 2*(SD-b.Diameter))
-		} else if !(b.LongitudinalPitch > b.Diameter) {
-			return g, BankImpossible
-		} else if g.pitches < 0.7 {
-			return g, PitchRange
+			nearest = min(nearest, SD)
+			if b.Rows > 2 {
+				nearest = min(nearest, 2*b.LongitudinalPitch)
+			}
+		} else {
+			nearest = min(nearest, b.LongitudinalPitch)
 		}
-		if !(width > 0) {
-			return g, BankImpossible
-		}
+	}
+	if !(nearest > b.Diameter) {
+		return g, BankImpossible
+	}
+	if b.Rows > 1 && b.Arrangement == InLine && g.pitches < 0.7 {
+		return g, PitchRange
 	}
 	n := float64(b.TubesPerRow)
 	tubes := n * float64(b.Rows)
@@ -89,10 +92,8 @@ func (b *Bank) geometry() (g bankGeometry, fault Fault) {
 			}
 		}
 		t, height, r := f.Thickness, f.Height, b.Diameter/2
-		// Fins must not meet those of the next tube.
-		if !(2*height < b.TransversePitch-b.Diameter) || b.Rows > 1 && !(2*height < min(b.LongitudinalPitch, SD)-b.Diameter) && b.Arrangement == InLine ||
-			b.Rows > 1 && b.Arrangement == Staggered && !(2*height < SD-b.Diameter) {
-			return g, BankImpossible
+		if !(nearest > b.Diameter+2*height) {
+			return g, BankImpossible // fins of neighbours meet
 		}
 		switch f.Kind {
 		case AnnularFins:
@@ -124,6 +125,7 @@ func (b *Bank) geometry() (g bankGeometry, fault Fault) {
 		g.area = b.FlowArea
 	}
 	g.rows = rowCorrection(b.Arrangement, b.Rows)
+	g.law = newBankLaw(b.Arrangement, g.pitches)
 	g.prepared = true
 	return g, OK
 }
@@ -175,16 +177,44 @@ func BankNusselt(a Arrangement, Re, Pr, Prw, pitches float64) (float64, Fault) {
 	if !(Re >= bankLow && Re <= bankHigh) {
 		return 0, ReynoldsRange
 	}
-	return bankNusselt(a, Re, Pr, Prw, pitches), OK
+	law := newBankLaw(a, pitches)
+	return law.nusselt(Re, Pr, Prw), OK
 }
 
-// bankNusselt is BankNusselt without its range.
-func bankNusselt(a Arrangement, Re, Pr, Prw, pitches float64) float64 {
+// bankLaw holds the table of BankNusselt for one bank, in logarithms.
+type bankLaw struct {
+	c, m  [4]float64 // ln c and m of each line
+	bound [3]float64 // ln Re between the lines
+}
+
+func newBankLaw(a Arrangement, pitches float64) bankLaw {
+	c, m, bound := [4]float64{0.9, 0.52, 0.27, 0.033}, [4]float64{0.4, 0.5, 0.63, 0.8}, [3]float64{100, 1000, 2e5}
+	if a == Staggered {
+		if pitches == 0 {
+			pitches = 1
+		}
+		p := math.Pow(pitches, 0.2)
+		c, m, bound = [4]float64{1.04, 0.71, 0.35 * p, 0.031 * p}, [4]float64{0.4, 0.5, 0.6, 0.8}, [3]float64{40, 1000, 2e5}
+		if pitches >= 2 {
+			c[2] = 0.40
+		}
+	}
+	for i := range c {
+		c[i] = math.Log(c[i])
+	}
+	for i := range bound {
+		bound[i] = math.Log(bound[i])
+	}
+	return bankLaw{c: c, m: m, bound: bound}
+}
+
+// nusselt is BankNusselt without its range.
+func (l *bankLaw) nusselt(Re, Pr, Prw float64) float64 {
 	x := math.Log(Re)
-	line := bankLine(a, 0, x, pitches)
-	for i, bound := range bankBounds(a) {
+	line := l.c[0] + l.m[0]*x
+	for i := range l.bound {
 		// w goes smoothly from 0 to 1 across the bound.
-		z := 0.5 + (x-math.Log(bound))/(2*math.Ln2)
+		z := 0.5 + (x-l.bound[i])/(2*math.Ln2)
 		if z <= 0 {
 			break
 		}
@@ -192,32 +222,9 @@ func bankNusselt(a Arrangement, Re, Pr, Prw, pitches float64) float64 {
 		if z < 1 {
 			w = z * z * (3 - 2*z)
 		}
-		line += w * (bankLine(a, i+1, x, pitches) - line)
+		line += w * (l.c[i+1] + l.m[i+1]*x - line)
 	}
-	return math.Exp(line) * math.Pow(Pr, 0.36) * math.Sqrt(math.Sqrt(Pr/Prw))
-}
-
-func bankBounds(a Arrangement) [3]float64 {
-	if a == Staggered {
-		return [3]float64{40, 1000, 2e5}
-	}
-	return [3]float64{100, 1000, 2e5}
-}
-
-// bankLine gives ln(c Re^m) of line i of the table.
-func bankLine(a Arrangement, i int, x, pitches float64) float64 {
-	c, m := [4]float64{0.9, 0.52, 0.27, 0.033}, [4]float64{0.4, 0.5, 0.63, 0.8}
-	if a == Staggered {
-		if pitches == 0 {
-			pitches = 1
-		}
-		p := math.Pow(pitches, 0.2)
-		c, m = [4]float64{1.04, 0.71, 0.35 * p, 0.031 * p}, [4]float64{0.4, 0.5, 0.6, 0.8}
-		if pitches >= 2 {
-			c[2] = 0.40
-		}
-	}
-	return math.Log(c[i]) + m[i]*x
+	return math.Exp(line+0.36*math.Log(Pr)) * math.Sqrt(math.Sqrt(Pr/Prw))
 }
 
 // conductance gives the film conductance [W/K] between gas and tubes with the fins, from the film coefficient h, and the

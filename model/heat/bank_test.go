@@ -138,6 +138,9 @@ func TestBankFaults(t *testing.T) {
 		{"tubes touch along", func(b *Bank) { b.LongitudinalPitch = 5e-3 }, BankImpossible},
 		{"wide rows", func(b *Bank) { b.LongitudinalPitch = 12e-3 }, PitchRange},
 		{"tubes touch on the diagonal", func(b *Bank) { b.Arrangement, b.LongitudinalPitch = Staggered, 2e-3 }, BankImpossible},
+		{"tubes touch two rows on", func(b *Bank) {
+			b.Arrangement, b.Rows, b.TransversePitch, b.LongitudinalPitch = Staggered, 3, 30e-3, 2.4e-3
+		}, BankImpossible},
 		{"negative area", func(b *Bank) { b.FlowArea = -1 }, BadNumber},
 		{"fins without thickness", func(b *Bank) { b.Fins = Fins{Kind: AnnularFins, Height: 1e-3, Pitch: 1e-3, Conductivity: 20} }, BadNumber},
 		{"fins meet", func(b *Bank) {

@@ -112,7 +112,7 @@ func (b *Burner) Combustion() *Combustion { return &b.combustion }
 //	h_in + preheat(Tg) - h_gas(Tg) - casing(Tg) - radiation(Tg) = 0
 //
 // falls with Tg everywhere, because the preheater gives back no more than the flue gas loses. It is solved by Newton's
-// method kept in a bracket, to rounding. With tubes hotter than the gas, heat flows from them and Heat is
+// method and the secant, kept in a bracket, to rounding. With tubes hotter than the gas, heat flows from them and Heat is
 // negative. Fuel power that drives the bank out of its law is ReynoldsRange, annular fins out of theirs FinRange; a gas below 300 K before the bank is
 // TooCold, one above 5000 K TemperatureRange.
 //
@@ -143,10 +143,12 @@ func Solve(dst *Balance, b *Burner, fuelPower, Tw float64) Fault {
 	if !(Tg > low && Tg < high) {
 		Tg = 1500
 	}
-	var behind passage
+	Prw := c.prandtl(Tw)
+	behind := passage{exit: (Tg + Tw) / 2}
+	var before, residual float64
 	settled := false
-	for range 100 {
-		if fault := b.pass(&behind, dst.FuelFlow, Tg, Tw); fault != OK {
+	for i := range 100 {
+		if fault := b.pass(&behind, dst.FuelFlow, Tg, Tw, Prw); fault != OK {
 			return fault
 		}
 		// Residual and slope per kilogram of fuel.
@@ -160,6 +162,11 @@ func Solve(dst *Balance, b *Burner, fuelPower, Tw float64) Fault {
 			high = Tg
 		}
 		slope := behind.preheatSlope - c.GasCp(Tg) - b.CasingConductance*perFlow - 4*radiation*Tg*Tg*Tg
+		// The slope leaves out how the film varies; the secant of the last two residuals has it.
+		if secant := (r - residual) / (Tg - before); i > 0 && secant < 0.5*slope && secant > 2*slope {
+			slope = secant
+		}
+		before, residual = Tg, r
 		next := Tg - r/slope
 		if math.Abs(next-Tg) <= 1e-12*Tg {
 			settled = true
@@ -238,35 +245,40 @@ type passage struct {
 //
 //	exit = Tw + (Tg - Tw) exp(-UA/(mdot cp)),  properties at Tm = (Tg + exit)/2
 //
-// is solved for the exit by repeated substitution: the film varies so weakly with Tm that each step
-// gains two digits or more.
+// is solved for the exit by repeated substitution and, from the second step on, the secant: the film varies so
+// weakly with Tm that some four steps do. p.exit is the first guess. Prw is the Prandtl number at Tw.
 //
 // Source: [Incropera2007], sections 7.6 and 11.4
-func (b *Burner) pass(p *passage, flow, Tg, Tw float64) Fault {
+func (b *Burner) pass(p *passage, flow, Tg, Tw, Prw float64) Fault {
 	c, g := &b.combustion, &b.bank
-	Prw := c.prandtl(Tw)
 	speed := flow * c.GasMass / g.area // mass flux [kg/(m2 s)]
-	exit := (Tg + Tw) / 2
-	var decay float64
+	exit := min(max(p.exit, min(Tg, Tw)), max(Tg, Tw))
+	var decay, before, miss float64
 	for i := 0; ; i++ {
 		Tm := (Tg + exit) / 2
 		mu, k := c.transport.at(Tm)
-		Pr := mu * c.gas.cp(Tm) / (c.GasMass * k)
+		cp := c.gas.cp(Tm)
 		p.reynolds = speed * b.Bank.Diameter / mu
-		Nu := bankNusselt(b.Bank.Arrangement, p.reynolds, Pr, Prw, g.pitches)
-		p.film = g.rows * Nu * k / b.Bank.Diameter
+		p.film = g.rows * g.law.nusselt(p.reynolds, mu*cp/(c.GasMass*k), Prw) * k / b.Bank.Diameter
 		p.conductance, p.fin = b.Bank.conductance(g, p.film)
-		p.units = p.conductance / (flow * c.GasCp(Tm))
+		p.units = p.conductance / (flow * cp)
 		decay = math.Exp(-p.units)
-		next := Tw + (Tg-Tw)*decay
-		change := math.Abs(next - exit)
-		exit = next
-		if change <= 1e-13*exit {
+		step := Tw + (Tg-Tw)*decay - exit
+		if math.Abs(step) <= 1e-13*exit {
 			break
 		}
 		if i == 100 {
 			return NoConvergence
 		}
+		next := exit + step
+		if slope := (step - miss) / (exit - before); i > 0 && slope > -2 && slope < -0.5 {
+			next = exit - step/slope
+		}
+		// A secant may point out of where the exit must lie; the substitution cannot.
+		if !(next >= min(Tg, Tw) && next <= max(Tg, Tw)) {
+			next = exit + step
+		}
+		before, miss, exit = exit, step, next
 	}
 	p.exit = exit
 	return b.preheat(p, flow, decay)

@@ -177,7 +177,7 @@ const atmosphere = 101325
 //
 //	p = 610.94 Pa exp(17.625 t/(t + 243.04)),  t in degC, p partial pressure of the water
 //
-// The form is good to 0.4 % on p from -40 to 50 degC, and found here to be within 2 % on p up to 100 degC, 0.6 K. Acids of
+// The form is good to 0.4 % on p from -40 to 50 degC, and 2.7 % or 0.8 K off at 100 degC. Acids of
 // sulphur, which raise the dew point, are left out. Flue gas without water has a dew point of 0 K.
 //
 // Source: [Alduchov1996], from memory
