@@ -64,8 +64,8 @@ type Balance struct {
 	Condensing   bool // flue gas below its dew point: more heat would be had than is counted, and wet flue
 }
 
-// dissociation is where complete combustion is taken to overstate the temperature [K]. There a lean methane flame
-// falls short by some 1 %.
+// dissociation is where complete combustion is taken to overstate the temperature [K]: there it is some 1 to 2 % too high, and
+// the error grows fast (from memory).
 const dissociation = 2200
 
 // Prepare checks the burner and works out what does not depend on fuel flow and wall temperature.

@@ -28,7 +28,10 @@ const (
 	airAr = 0.00970
 )
 
-// Set works out the complete combustion of f with excess-air ratio lambda, >= 1. Carbon becomes CO2, hydrogen
+// excessHigh is far above any flame that burns.
+const excessHigh = 100
+
+// Set works out the complete combustion of f with excess-air ratio lambda, 1 to 100. Carbon becomes CO2, hydrogen
 // H2O as vapour, nitrogen N2; air is dry.
 //
 //	O2 needed per kg = C/M(C) + H/(4 M(H)) - O/(2 M(O))     C, H, O shares by mass
@@ -43,7 +46,7 @@ func (c *Combustion) Set(f *Fuel, lambda float64) Fault {
 	if !(lambda >= 1) {
 		return TooLittleAir
 	}
-	if !finite(lambda) {
+	if !(lambda <= excessHigh) {
 		return BadNumber
 	}
 

@@ -6,7 +6,7 @@ type Fault uint8
 
 const (
 	OK                 Fault = iota
-	BadNumber                // a quantity is not finite or has the wrong sign
+	BadNumber                // a quantity is not finite, has the wrong sign or no possible size
 	BadShare                 // a share, an effectiveness or an emittance outside its range
 	SharesNotOne             // the shares of the fuel do not add up to 1
 	NoBurning                // the fuel needs no oxygen
@@ -29,7 +29,7 @@ func (f Fault) String() string {
 	case OK:
 		return ""
 	case BadNumber:
-		return "a quantity of the heat source is not finite or has the wrong sign"
+		return "a quantity of the heat source is not finite, has the wrong sign or no possible size"
 	case BadShare:
 		return "a share, an effectiveness or an emittance is outside its range"
 	case SharesNotOne:
@@ -65,8 +65,9 @@ func (f Fault) String() string {
 // Error makes a fault usable as an error.
 func (f Fault) Error() string { return f.String() }
 
-// finite tells whether x is a number.
-func finite(x float64) bool { return x-x == 0 }
+// finite tells whether x is a number of a size that an input in SI units can have; beyond it sums and fourth
+// powers would lose all digits.
+func finite(x float64) bool { return x <= 1e12 && x >= -1e12 }
 
 // share tells whether x is in 0..1.
 func share(x float64) bool { return x >= 0 && x <= 1 }

@@ -71,7 +71,7 @@ type Fuel struct {
 	Ash      float64 // [-]; leaves cold
 
 	// LowerHeating is the lower heating value as fired, at constant pressure and 298.15 K [J/kg]. 0 = worked out:
-	// of a gas from the polynomials, else by EstimateLowerHeating.
+	// of a gas from the polynomials, else by EstimateLowerHeating. Else 1e5 to 2e8.
 	LowerHeating float64
 
 	HeatCapacity float64 // of a liquid or solid fuel [J/(kg K)], >= 0; a gas has its polynomials
@@ -121,9 +121,9 @@ func (g *Gas) moles() [speciesCount]float64 {
 	}
 }
 
-// Check tells whether the fuel is one: shares in 0..1 that add up to 1, heating value and heat capacity not negative.
+// Check tells whether the fuel is one: shares in 0..1 that add up to 1, heating value and heat capacity of a possible size.
 func (f *Fuel) Check() Fault {
-	if !(f.LowerHeating >= 0 && f.HeatCapacity >= 0 && finite(f.LowerHeating) && finite(f.HeatCapacity)) {
+	if f.LowerHeating != 0 && !(f.LowerHeating >= 1e5 && f.LowerHeating <= 2e8) || !(f.HeatCapacity >= 0 && f.HeatCapacity <= 2e4) {
 		return BadNumber
 	}
 	var sum float64

@@ -14,7 +14,7 @@ type Receiver struct {
 	WindowThermal       float64 // share of the wall's own radiation that the window lets out, the rest comes back [-], 0..1; 1 = no window
 	Film                float64 // convection on the aperture area [W/(m2 K)], >= 0
 	CasingConductance   float64 // heat loss through the insulation [W/K], >= 0
-	Ambient             float64 // temperature of air, surroundings and sky [K], > 0
+	Ambient             float64 // temperature of air, surroundings and sky [K], > 0, <= 400
 }
 
 // ReceiverBalance says where the radiation went. It closes: Incident = WindowLoss + Reflection + Reradiation +
@@ -55,8 +55,11 @@ func (r *Receiver) check() (absorptance, emittance float64, fault Fault) {
 			return 0, 0, BadNumber
 		}
 	}
-	if !(r.ApertureArea > 0 && r.WallArea >= r.ApertureArea && r.Ambient > 0 && finite(r.WallArea) && finite(r.Ambient)) {
+	if !(r.ApertureArea > 0 && r.WallArea >= r.ApertureArea && finite(r.WallArea)) {
 		return 0, 0, BadNumber
+	}
+	if !(r.Ambient > 0 && r.Ambient <= 400) {
+		return 0, 0, TemperatureRange
 	}
 	if !share(r.WindowTransmittance) || !share(r.WindowThermal) {
 		return 0, 0, BadShare
@@ -69,7 +72,7 @@ func (r *Receiver) check() (absorptance, emittance float64, fault Fault) {
 	return absorptance, emittance, fault
 }
 
-// Solve fills dst with the balance at the wall temperature Tw [K], > 0:
+// Solve fills dst with the balance at the wall temperature Tw [K], > 0, <= 5000:
 //
 //	Heat = tw a P - tt e sigma A (Tw^4 - Ta^4) - h A (Tw - Ta) - K (Tw - Ta)
 //
@@ -84,7 +87,7 @@ func (r *Receiver) Solve(dst *ReceiverBalance, Tw float64) Fault {
 	if fault != OK {
 		return fault
 	}
-	if !(Tw > 0 && finite(Tw)) {
+	if !(Tw > 0 && Tw <= 5000) {
 		return TemperatureRange
 	}
 	out := r.WindowThermal * e
@@ -131,10 +134,17 @@ func (r *Receiver) WallTemperature(Q float64) (float64, Fault) {
 	if !(sum > 0) {
 		return 0, TooCold
 	}
-	if c4 == 0 {
-		return sum / c1, OK
+	// Without the linear losses, or without radiation, the wall would be hotter: both are above the root.
+	T := math.Inf(1)
+	if c4 > 0 {
+		T = math.Sqrt(math.Sqrt(sum / c4))
 	}
-	T := math.Sqrt(math.Sqrt(sum / c4)) // above the root, which it is without the linear losses
+	if c1 > 0 {
+		T = min(T, sum/c1)
+	}
+	if !finite(T) {
+		return 0, LossFree
+	}
 	for range 200 {
 		d := (c4*T*T*T*T + c1*T - sum) / (4*c4*T*T*T + c1)
 		T -= d
