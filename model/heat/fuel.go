@@ -84,7 +84,7 @@ type Fuel struct {
 //	wood gas      by mole CO 0.20, H2 0.17, CO2 0.12, CH4 0.02, rest N2: an ordinary dry gas of an
 //	              air-blown downdraught gasifier (CO 0.17-0.22, H2 0.12-0.20, CO2 0.09-0.15, CH4 0.02-0.03)
 //	wood pellets  by mass C 0.462, H 0.057, O 0.395, N 0.001, water 0.080, ash 0.005: dry softwood with 8 % water;
-//	              heating value estimated, 17.2 MJ/kg, where suppliers state 16.5 to 18
+//	              heating value estimated, 17.3 MJ/kg, where suppliers state 16.5 to 18
 //
 // Source: [FAO1986] for the wood gas; compositions, heating values and heat capacities are typical ones from memory
 func NewFuel(kind FuelKind) Fuel {
