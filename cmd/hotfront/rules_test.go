@@ -88,7 +88,7 @@ func TestImports(t *testing.T) {
 				allowed = !under(ours, "cmd") && !under(ours, "optimize/archive")
 			}
 			leaf := s.dir == "optimize/pareto" || s.dir == "optimize/sample" || s.dir == "optimize/batch" ||
-				s.dir == "model/gas" || s.dir == "model/correlation" || s.dir == "model/loss" || s.dir == "model/metal" || s.dir == "model/drive"
+				s.dir == "model/gas" || s.dir == "model/correlation" || s.dir == "model/loss" || s.dir == "model/metal" || s.dir == "model/drive" || s.dir == "model/heat"
 			if !allowed || leaf {
 				t.Errorf("%s imports %s", s.path, path)
 			}
