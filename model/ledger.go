@@ -154,7 +154,7 @@ func (w *Workspace) setHeatLosses(dst *Performance, e *Engine, c *Corrections) {
 	dst.RegeneratorNTU = film * float64(last-first+1) / (flow * w.state.Cp)
 
 	hot, cold := dst.HeaterInnerTemperature, dst.CoolerWallTemperature
-	drop := max(hot-cold, 0)
+	drop := hot - cold // below zero in a heat pump, and the heat then flows the other way
 	mid := 0.5 * (hot + cold)
 	reg := &e.Regenerator
 	section := loss.TubeSection(reg.Diameter, reg.CanisterWall)
@@ -166,7 +166,7 @@ func (w *Workspace) setHeatLosses(dst *Performance, e *Engine, c *Corrections) {
 
 	// The hot body stands between the gas of both spaces.
 	te, tc := dst.ExpansionTemperature, dst.CompressionTemperature
-	drop = max(te-tc, 0)
+	drop = te - tc
 	mid = 0.5 * (te + tc)
 	w.gas.At(&w.state, mid, p.Mean)
 	mu, k := w.gas.Transport(mid, 1/w.state.V)
@@ -188,6 +188,7 @@ func (w *Workspace) setHeatLosses(dst *Performance, e *Engine, c *Corrections) {
 	gap := loss.AppendixGap{
 		Diameter: g.hot.Bore - g.hot.Gap, Width: g.hot.Gap, Length: g.hot.Length,
 		PressureMean: r.PressureMean, PressureRate: rate / float64(p.Fine.Steps), Frequency: f,
+		// Where the cold space is the hotter only the part of the loss without a gradient is left.
 		HotTemperature: max(te, tc), ColdTemperature: tc,
 		HeatCapacity: w.state.Cp, Conductivity: k, GasConstant: w.gas.R,
 	}

@@ -53,6 +53,9 @@ func (r *reader) correctionsWord(s scalar) {
 	if err == nil {
 		err = r.takeSet(data, s)
 	}
+	if err == nil && s.text == fittedSet { // the file has the name of the engine it was fitted to
+		r.factor["set"] = scalar{text: fittedSet, place: s.place}
+	}
 	if err != nil {
 		r.fault(s.place, "corrections", &fault{Corrections, fmt.Sprintf("%s: %v", name, err),
 			"write none, rig, the file of a set that `hotfront calibrate` wrote, or a block with " + orList(correctionNames())})

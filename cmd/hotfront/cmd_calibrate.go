@@ -7,7 +7,6 @@ import (
 	"os"
 	"regexp"
 	"slices"
-	"strings"
 	"time"
 
 	"github.com/spf13/cobra"
@@ -66,7 +65,7 @@ func (p *program) calibrate(file string, o *calibrateOptions) error {
 		o.name = s.Name
 	}
 	if o.out != "" {
-		if err := o.checkOut(file); err != nil {
+		if err := o.checkOut(); err != nil {
 			return err
 		}
 	}
@@ -108,11 +107,11 @@ func (p *program) calibrate(file string, o *calibrateOptions) error {
 }
 
 // checkOut refuses a name or a file for the corrections before any work is done for them.
-func (o *calibrateOptions) checkOut(study string) error {
+func (o *calibrateOptions) checkOut() error {
 	if !regexp.MustCompile(`^[A-Za-z0-9][A-Za-z0-9_-]*$`).MatchString(o.name) {
 		return failed(exitUsage, fmt.Sprintf("%q is no name for a set of corrections: letters, digits, - and _; give one by --name", o.name))
 	}
-	if slices.Contains([]string{"none", "rig"}, o.name) && !strings.Contains(study, "ground-power-unit") {
+	if slices.Contains([]string{"none", "rig"}, o.name) {
 		return failed(exitUsage, fmt.Sprintf("%q is the name of a shipped set; give another by --name", o.name))
 	}
 	if _, err := os.Stat(o.out); err == nil {
