@@ -57,7 +57,7 @@ func TestRunEndsWithAPrefix(t *testing.T) {
 		var count atomic.Int64
 		pool := NewPool(workers, func() func(*item) {
 			return func(it *item) {
-				if count.Add(1) == 20 {
+				if count.Add(1) >= 20 { // every worker, since another one may be held up before it cancels
 					cancel()
 				}
 				it.out = 1
@@ -65,7 +65,7 @@ func TestRunEndsWithAPrefix(t *testing.T) {
 		}, fail)
 		items := make([]item, 100)
 		done := pool.Run(ctx, items)
-		if done < 20 || done > 20+workers {
+		if done < 20 || done > 19+workers {
 			t.Errorf("%d workers: %d done", workers, done)
 		}
 		for i, it := range items {
