@@ -68,20 +68,72 @@ func (s *Solver) Solve(dst *Result, path *Path, set Settings) {
 	dst.Steps += first.Steps
 }
 
+// Resume is Solve for the path of the last solution with the heater at another temperature behind its
+// walls: it starts from that solution, which is near. Geometry, gas, motion and cold end must be the same.
+func (s *Solver) Resume(dst *Result, path *Path, set Settings) {
+	if !dst.Converged || path.Target > 0 {
+		s.Solve(dst, path, set)
+		return
+	}
+	old := dst.Outer
+	s.path = path
+	s.move = &path.Fine
+	s.warm(old)
+	s.mixing.reset(set.Depth)
+	s.cycles(dst, path, set, false)
+	if !dst.Converged {
+		resumed := *dst
+		s.Solve(dst, path, set)
+		dst.Cycles += resumed.Cycles
+		dst.FineCycles += resumed.FineCycles
+		dst.Steps += resumed.Steps
+	}
+}
+
+// warm moves gas and metal with the hot end, each by its place between the temperature of the coldest wall
+// and that behind the heater walls, which was old [K].
+func (s *Solver) warm(old float64) {
+	cold, outer := math.Inf(1), old
+	for i := range s.n {
+		if s.kind[i] != Tube {
+			continue
+		}
+		cold = min(cold, s.wall[i])
+		if s.part[i] == PartHeater {
+			outer = s.path.Cells[i].Outer
+		}
+	}
+	stretch := (outer - cold) / (old - cold)
+	if !(stretch > 0) {
+		return
+	}
+	for i := range s.n {
+		s.t[i] = cold + (s.t[i]-cold)*stretch
+		if s.kind[i] == Tube || s.kind[i] == Matrix {
+			s.wall[i] = cold + (s.wall[i]-cold)*stretch
+		}
+	}
+}
+
 func (s *Solver) attempt(dst *Result, path *Path, set Settings) {
 	s.move = &path.Fine
 	if path.Coarse.Steps > 0 && !set.FineOnly {
 		s.move = &path.Coarse
 	}
 	s.begin(set)
+	s.cycles(dst, path, set, true)
+}
+
+// cycles runs cycle after cycle until the state repeats and balances, from rest or from a solution nearby.
+func (s *Solver) cycles(dst *Result, path *Path, set Settings, fromRest bool) {
 	*dst = Result{}
 	lastWork := math.Inf(1)
 	for cycle := 1; cycle <= set.MaxCycles; cycle++ {
-		s.transport(cycle == 1)
+		s.transport(fromRest && cycle == 1)
 		s.conserved()
 		s.mixing.push(s)
 		s.newton = set.Newton
-		if cycle == 1 { // from rest: the first prediction is poor
+		if fromRest && cycle == 1 { // the first prediction is poor
 			s.newton += 2
 		}
 		if !s.run() {

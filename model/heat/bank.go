@@ -15,7 +15,7 @@ const (
 type Bank struct {
 	Arrangement       Arrangement
 	Rows              int     // one behind the other in the direction of flow
-	TubesPerRow       int     // beside one another
+	TubesPerRow       float64 // beside one another, the mean of the rows
 	Diameter          float64 // outer, of the tubes [m]
 	TransversePitch   float64 // from tube to tube across the flow [m], > diameter
 	LongitudinalPitch float64 // from row to row [m]; not read with one row
@@ -43,7 +43,7 @@ type bankGeometry struct {
 //
 // Source: [Incropera2007], section 7.6; the share blocked by fins by derivation
 func (b *Bank) geometry() (g bankGeometry, fault Fault) {
-	if b.Rows < 1 || b.TubesPerRow < 1 || b.Arrangement > Staggered || b.Fins.Kind > LongitudinalFins {
+	if b.Rows < 1 || !(b.TubesPerRow >= 1 && finite(b.TubesPerRow)) || b.Arrangement > Staggered || b.Fins.Kind > LongitudinalFins {
 		return g, BankImpossible
 	}
 	for _, x := range [...]float64{b.Diameter, b.TransversePitch, b.Length} {
@@ -78,7 +78,7 @@ func (b *Bank) geometry() (g bankGeometry, fault Fault) {
 	if b.Rows > 1 && b.Arrangement == InLine && g.pitches < 0.7 {
 		return g, PitchRange
 	}
-	n := float64(b.TubesPerRow)
+	n := b.TubesPerRow
 	tubes := n * float64(b.Rows)
 	g.frontal = n * b.TransversePitch * b.Length
 	g.plain = tubes * math.Pi * b.Diameter * b.Length

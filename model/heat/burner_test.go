@@ -258,7 +258,7 @@ func randomBurner(r *rand.Rand) Burner {
 		ExcessAir: 1 + 2*r.Float64()*r.Float64(), Ambient: 250 + 100*r.Float64(),
 		CasingShare: 0.2 * r.Float64(),
 		Bank: Bank{
-			Arrangement: Arrangement(r.IntN(2)), Rows: 1 + r.IntN(5), TubesPerRow: 5 + r.IntN(60), Diameter: 2e-3 + 1e-2*r.Float64(),
+			Arrangement: Arrangement(r.IntN(2)), Rows: 1 + r.IntN(5), TubesPerRow: float64(5 + r.IntN(60)), Diameter: 2e-3 + 1e-2*r.Float64(),
 			Length: 0.02 + 0.5*r.Float64(),
 		},
 		FlameEmissivity: r.Float64(), WallEmissivity: r.Float64(),
