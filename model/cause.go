@@ -27,6 +27,14 @@ func (c Cause) String() string {
 		return "porosity or wire of the regenerator cannot be made"
 	case ColderThanCoolant:
 		return "hot end not above the coolant"
+	case SourceTooWeak:
+		return "heat source too weak or too cold"
+	case SourceTooHot:
+		return "heat source drives the tube wall above 1530 degC"
+	case BankImpossible:
+		return "tubes or fins leave the burner's gas no way through"
+	case BankRange:
+		return "burner's tube bank or fins outside the range of their laws"
 	case NoHeat:
 		return "flow friction, not the heat source, heats the engine"
 	case BufferTooSmall:

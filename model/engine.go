@@ -3,6 +3,7 @@ package model
 import (
 	"hotfront/model/drive"
 	"hotfront/model/gas"
+	"hotfront/model/heat"
 	"hotfront/model/metal"
 )
 
@@ -29,6 +30,8 @@ type HeatKind uint8
 const (
 	HeatTubeWall HeatKind = iota // mean outer tube-wall temperature
 	HeatTubeGas                  // mean gas temperature in the heated tubes
+	HeatBurner                   // burner; the tube wall is given and the fuel follows, or the fuel and the wall follows
+	HeatReceiver                 // receiver of concentrated radiation; the tube wall follows
 )
 
 // Engine is one design: the input of the model. Everything is SI. Zero values are not defaults;
@@ -101,7 +104,8 @@ type Heater struct {
 	HeatedLength float64 // part of the length that takes up heat [m]
 	EndLoss      float64 // sum of the loss coefficients of entry, exit and bends, on the dynamic pressure in the tube [-]
 	Alloy        metal.Alloy
-	RingDiameter float64 // circle on which the tubes stand [m]; 0 = not given, fit not checked
+	Rows         int     // circles on which the tubes stand, one behind the other in the way of a burner's gas, equally filled
+	RingDiameter float64 // mean diameter of these circles [m]; 0 = not given, fit not checked
 	FluxPeaking  float64 // largest local heat flux over the mean [-], >= 1
 	DesignLife   float64 // [s]
 	StressFactor float64 // creep rupture stress at the design life over allowable stress [-], >= 1
@@ -143,7 +147,50 @@ type Duct struct {
 // Heat says how the hot end is given.
 type Heat struct {
 	Kind        HeatKind
-	Temperature float64 // [K]
+	Temperature float64 // mean outer tube wall, or mean gas in the tubes [K]; not read where the wall follows from the source
+	Burner      Burner
+	Receiver    Receiver
+}
+
+// Burner heats the tubes with the gas of a flame; its bank of tubes is the heater. See package heat.
+type Burner struct {
+	FuelKind  heat.FuelKind
+	Given     heat.Fuel // of a GivenFuel
+	FuelPower float64   // lower heating value times fuel flow [W]; 0 = as much as keeps the tube wall at Heat.Temperature
+	ExcessAir float64   // air over stoichiometric air [-], >= 1
+
+	PreheaterEffectiveness float64 // [-], 0..1; this or the next, both 0 = no preheater
+	PreheaterConductance   float64 // [W/K]
+
+	Ambient           float64 // temperature of air, fuel and surroundings [K]
+	CasingShare       float64 // heat through the casing over fuel power [-], 0..1
+	CasingConductance float64 // further heat through it, per difference of gas to ambient temperature [W/K]
+
+	Arrangement     heat.Arrangement
+	RowPitch        float64 // from row to row over the outer diameter of the tubes [-]; not read with one row
+	Fins            heat.Fins
+	FlameEmissivity float64 // of the gas in the chamber [-], 0..1; 0 = no radiation
+	WallEmissivity  float64 // of the tubes [-], 0..1
+	RadiantArea     float64 // of the tubes that the chamber sees [m2]; 0 = the front of the bank
+}
+
+// Receiver takes up concentrated radiation; its wall is the outside of the tubes. See package heat.
+type Receiver struct {
+	Power               float64 // radiation into the aperture [W]
+	ApertureDiameter    float64 // [m]
+	WallArea            float64 // inner wall of the cavity without the aperture [m2]
+	Absorptance         float64 // of the wall for sunlight [-], 0..1
+	Emittance           float64 // of the wall for its own radiation [-], 0..1
+	WindowTransmittance float64 // for sunlight [-], 0..1; 1 = no window
+	WindowThermal       float64 // share of the wall's own radiation that the window lets out [-], 0..1; 1 = no window
+	Film                float64 // convection on the aperture area [W/(m2 K)]
+	CasingConductance   float64 // heat loss through the insulation [W/K]
+	Ambient             float64 // temperature of air, surroundings and sky [K]
+}
+
+// Held tells whether the temperature of the hot end is given, and does not follow from the heat source.
+func (h *Heat) Held() bool {
+	return h.Kind <= HeatTubeGas || h.Kind == HeatBurner && h.Burner.FuelPower == 0
 }
 
 // Coolant cools the outside of the cooler tubes (water).

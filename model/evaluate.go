@@ -29,7 +29,7 @@ func (w *Workspace) evaluate(dst *Performance, e *Engine, c *Corrections) Cause 
 	if cause := w.geometry.set(e); cause != None {
 		return cause
 	}
-	if e.Heat.Temperature <= e.Coolant.Inlet+1 {
+	if e.Heat.Held() && e.Heat.Temperature <= e.Coolant.Inlet+1 {
 		return ColderThanCoolant
 	}
 	if !c.valid() {
@@ -39,9 +39,36 @@ func (w *Workspace) evaluate(dst *Performance, e *Engine, c *Corrections) Cause 
 	if cause := w.setMotion(e); cause != None {
 		return cause
 	}
-	w.setPath(e)
-	w.solver.Solve(&w.Cycle, &w.Path, w.Settings)
-	dst.Cycles = w.Cycle.Cycles
+	if cause := w.source.prepare(e, &w.geometry); cause != None {
+		return cause
+	}
+	var cause Cause
+	if e.Heat.Held() {
+		cause = w.run(dst, e, c, e.Heat.Temperature, false)
+	} else {
+		cause = w.runSource(dst, e, c)
+	}
+	if cause != None {
+		return cause
+	}
+	if cause := w.setSource(dst, e); cause != None {
+		return cause
+	}
+	w.setMetal(dst, e)
+	w.setWarnings(dst, e)
+	return None
+}
+
+// run solves the cycle with the hot end at a temperature [K] and draws up its ledger. near says that the last
+// solution was of the same design at another temperature.
+func (w *Workspace) run(dst *Performance, e *Engine, c *Corrections, hot float64, near bool) Cause {
+	w.setPath(e, hot)
+	if near {
+		w.solver.Resume(&w.Cycle, &w.Path, w.Settings)
+	} else {
+		w.solver.Solve(&w.Cycle, &w.Path, w.Settings)
+	}
+	dst.Cycles += w.Cycle.Cycles
 	if w.Cycle.Diverged {
 		return Diverged
 	}
@@ -56,8 +83,6 @@ func (w *Workspace) evaluate(dst *Performance, e *Engine, c *Corrections) Cause 
 	if heater := w.heat(cycle.PartHeater) * e.Speed; heater <= 0 || dst.HeatIn < leastHeat*heater {
 		return NoHeat
 	}
-	w.setMetal(dst, e)
-	w.setWarnings(dst, e)
 	return None
 }
 
@@ -73,7 +98,7 @@ func (c *Corrections) valid() bool {
 // finite tells whether the numbers that everything else follows from are finite.
 func (p *Performance) finite() bool {
 	sum := p.BrakePower + p.HeatIn + p.CoolantHeat + p.PressureMax + p.HeaterStressUtilisation +
-		p.HeaterMetalTemperature + p.Mach + p.Losses.sum() + p.HotMetalMass
+		p.HeaterMetalTemperature + p.Mach + p.Losses.sum() + p.HotMetalMass + p.FuelPower + p.Burner.Chimney + p.Receiver.Reradiation
 	return !math.IsNaN(sum) && !math.IsInf(sum, 0)
 }
 

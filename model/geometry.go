@@ -81,10 +81,13 @@ func (g *geometry) set(e *Engine) Cause {
 	return None
 }
 
-// pitchRatio is the distance of neighbouring tubes on their ring over their outer diameter.
+// pitchRatio is the distance of neighbouring tubes on the mean ring over their outer diameter.
 func (g *geometry) pitchRatio(h *Heater) float64 {
-	return h.RingDiameter * math.Sin(math.Pi/float64(max(h.TubeCount, 2))) / g.heaterOuter
+	return h.RingDiameter * math.Sin(math.Pi/max(h.tubesPerRow(), 2)) / g.heaterOuter
 }
+
+// tubesPerRow is the mean number of tubes on a ring; no number of rows given counts as one.
+func (h *Heater) tubesPerRow() float64 { return float64(h.TubeCount) / float64(max(h.Rows, 1)) }
 
 // bundleDiameter is the diameter of the circle that holds the cooler tubes in a triangular pattern:
 // each tube takes sqrt(3)/2 of the square of the pitch, and the rim is ragged by half a pitch all round.
@@ -103,12 +106,15 @@ func finiteInputs(e *Engine, g *geometry) bool {
 		float64(h.TubeCount), h.TubeBore, h.TubeWall, h.TubeLength, h.HeatedLength, h.DesignLife,
 		float64(r.Count), r.Diameter, r.Length, r.WireDiameter,
 		float64(c.TubeCount), c.TubeBore, c.TubeWall, c.TubeLength, c.CooledLength,
-		e.Heat.Temperature, e.Coolant.Inlet, e.Coolant.Flow, e.Coolant.Film,
+		e.Coolant.Inlet, e.Coolant.Flow, e.Coolant.Film,
+	}
+	if e.Heat.Held() && !(e.Heat.Temperature > 0 && !math.IsInf(e.Heat.Temperature, 1)) {
+		return false
 	}
 	notNegative := [...]float64{
 		e.ExpansionClearance, e.CompressionClearance, e.BufferVolume, g.hot.Rod, g.hot.Gap, g.hot.Wall,
 		g.hot.SealGap, g.hot.SealLength, g.cold.SealGap, g.cold.SealLength,
-		e.Cylinder.Wall, h.EndLoss, h.RingDiameter, h.FluxPeaking - 1, h.StressFactor - 1,
+		e.Cylinder.Wall, h.EndLoss, float64(h.Rows), h.RingDiameter, h.FluxPeaking - 1, h.StressFactor - 1,
 		r.InnerDiameter, r.Porosity, r.CanisterWall, c.EndLoss, c.ShellDiameter,
 		e.ExpansionDuct.Volume, e.ExpansionDuct.Area, e.ExpansionDuct.Loss,
 		e.HotDuct.Volume, e.HotDuct.Area, e.HotDuct.Loss,

@@ -17,17 +17,17 @@ const (
 	waterHeat = 4180
 )
 
-// setPath describes the gas path to the cycle solver.
-func (w *Workspace) setPath(e *Engine) {
+// setPath describes the gas path to the cycle solver, the hot end at a temperature [K].
+func (w *Workspace) setPath(e *Engine, hot float64) {
 	p, g := &w.Path, &w.geometry
 	h, r, c := &e.Heater, &e.Regenerator, &e.Cooler
 	p.Gas = w.gas
 	p.Mean = e.ChargePressure
 	p.FixedRun = false
 	p.Target = 0
-	hot, cold := e.Heat.Temperature, e.Coolant.Inlet
+	cold := e.Coolant.Inlet
 	if e.Heat.Kind == HeatTubeGas {
-		p.Target = e.Heat.Temperature
+		p.Target = hot
 	}
 	law := correlation.WovenScreen
 	if r.Kind == RandomFibre {

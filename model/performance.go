@@ -66,12 +66,49 @@ type Performance struct {
 	CoolerFlowLoss        float64 // [W]
 	CoolantOutlet         float64 // [K]
 
+	FuelPower       float64 // lower heating value times fuel flow [W]
+	FuelEfficiency  float64 // brake power over fuel power [-]
+	Burner          BurnerResult
+	SolarEfficiency float64 // brake power over radiation into the aperture [-]
+	Receiver        ReceiverResult
+
 	Losses   Losses
 	Warnings Warnings
 
 	Cause  Cause // why there is no result; None for a valid one
 	Cycles int   // cycles to the periodic state
 	Steps  int   // time steps a cycle
+}
+
+// BurnerResult is the state of the burner; FuelPower = heat in + Casing + Chimney. All zero without one.
+type BurnerResult struct {
+	Efficiency       float64 // heat to the tubes over fuel power [-]
+	Casing           float64 // heat through the casing [W]
+	Chimney          float64 // heat in the flue gas [W]
+	Preheat          float64 // heat given back to the air, within the burner [W]
+	Radiation        float64 // heat to the tubes by radiation [W]
+	FuelFlow         float64 // [kg/s]
+	AirFlow          float64 // [kg/s]
+	AirTemperature   float64 // behind the preheater [K]
+	FlameTemperature float64 // adiabatic, with that air [K]
+	GasTemperature   float64 // before the bank of tubes [K]
+	BankExit         float64 // of the gas behind the bank [K]
+	FlueTemperature  float64 // behind the preheater [K]
+	Film             float64 // film coefficient in the bank, without radiation [W/(m2 K)]
+	FinEfficiency    float64 // [-]; 1 without fins
+	Reynolds         float64 // in the bank, on the tube diameter [-]
+}
+
+// ReceiverResult is the state of the receiver; its radiation = heat in + WindowLoss + Reflection + Reradiation +
+// Convection + Casing. All zero without one.
+type ReceiverResult struct {
+	Efficiency  float64 // heat to the tubes over radiation into the aperture [-]
+	WindowLoss  float64 // reflected or absorbed by the window [W]
+	Reflection  float64 // reflected by the wall and out of the aperture [W]
+	Reradiation float64 // [W]
+	Convection  float64 // [W]
+	Casing      float64 // [W]
+	Stagnation  float64 // wall temperature without an engine; 5000 K stands for more [K]
 }
 
 // Losses is the ledger, in watts; all are >= 0. Where each ends up is said by its comment.
@@ -102,6 +139,8 @@ const (
 	WarnTubeRange                         // Reynolds number outside the range of the tube correlation
 	WarnFitUnchecked                      // no ring or shell diameter given: fit of the tubes not checked
 	WarnPistonSpeed                       // mean piston speed above 6 m/s (common practice)
+	WarnFlame                             // adiabatic flame above 2200 K: dissociation left out, heat overstated
+	WarnDewPoint                          // flue gas below its dew point
 )
 
 // Cause says why a design has no result. It is an error that costs no allocation.
@@ -122,6 +161,10 @@ const (
 	AnnulusInverted         // inner diameter of the matrix above its outer diameter
 	MatrixImpossible        // porosity and wire that cannot be made
 	ColderThanCoolant       // hot end not above the coolant
+	SourceTooWeak           // the heat source does not keep the hot end 50 K above the coolant, or gives the heat at no fuel power
+	SourceTooHot            // the heat source drives the tube wall above 1800 K
+	BankImpossible          // tubes, pitches or fins that the burner's gas cannot flow through
+	BankRange               // flow or pitches of the burner's tube bank, or its fins, outside their laws
 	NoConvergence           // periodic state not reached
 	Diverged                // solution left the physical range
 )

@@ -3,7 +3,7 @@ package model
 // Texts says each warning in words.
 func (w Warnings) Texts() []string {
 	var texts []string
-	for bit := Warnings(1); bit <= WarnPistonSpeed; bit <<= 1 {
+	for bit := Warnings(1); bit <= WarnDewPoint; bit <<= 1 {
 		if w&bit != 0 {
 			texts = append(texts, bit.text())
 		}
@@ -27,6 +27,10 @@ func (w Warnings) text() string {
 		return "fit of the tubes not checked: give heater.ring_diameter and cooler.shell_diameter"
 	case WarnPistonSpeed:
 		return "mean piston speed above 6 m/s"
+	case WarnFlame:
+		return "adiabatic flame above 1927 degC: dissociation is left out and the heat to the tubes overstated"
+	case WarnDewPoint:
+		return "flue gas below its dew point: wet and corrosive, and more heat would be had than is counted"
 	}
 	return "unknown warning"
 }

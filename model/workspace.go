@@ -37,6 +37,7 @@ type Workspace struct {
 	geometry geometry
 	motion   motion
 	friction friction
+	source   source
 
 	// Histories over the full steps of a cycle, for the closed-form losses.
 	upper, lower, buffer [cycle.MaxSteps]float64
