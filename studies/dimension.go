@@ -40,6 +40,12 @@ func (q Quantity) dimension() dimension {
 		return dimension{0, 1, -3, -1}
 	case Speed:
 		return dimension{1, 0, -1, 0}
+	case Conductance:
+		return dimension{2, 1, -3, -1}
+	case SpecificEnergy:
+		return dimension{2, 0, -2, 0}
+	case SpecificHeat:
+		return dimension{2, 0, -2, -1}
 	}
 	return dimension{}
 }

@@ -37,9 +37,6 @@ func (r *reader) engineBlock(n *yaml.Node, prefix string) {
 		case isPrefix(r.fields, path+"."):
 			r.blocks[path] = e.where
 			r.engineBlock(e.value, path+".")
-		case path == "heat.burner" || path == "heat.receiver":
-			r.bad["heat.tube_wall"] = true
-			r.fault(e.where, "engine."+path, &fault{NotAvailable, e.key + " is not in this version", "give tube_wall or tube_gas"})
 		default:
 			r.unknownField(e, prefix)
 		}
@@ -131,8 +128,26 @@ func (r *reader) engine() {
 			r.missing(f)
 		}
 	}
-	r.heat()
+	r.source(e)
 	r.lengths(e)
+	r.outputsOf(e)
+}
+
+// outputsOf keeps the results that mean something with this machine; the others are known, to say so.
+func (r *reader) outputsOf(e *model.Engine) {
+	if !r.usable {
+		return
+	}
+	all := r.outputs
+	r.outputs = nil
+	for i := range all {
+		if o := all[i]; o.Applies(e) {
+			r.outputs = append(r.outputs, o)
+		} else {
+			r.absent = append(r.absent, o)
+		}
+	}
+	r.study.outputs = r.outputs
 }
 
 // selectors reads the values that decide which fields apply.
@@ -158,7 +173,7 @@ func (r *reader) selectors(e *model.Engine) bool {
 		r.fault(r.raw["drive.kind"].place, "engine.drive.kind", &fault{Contradiction, "a rhombic drive moves a displacer and a piston, an alpha machine has two pistons", "take beta or gamma, or another drive"})
 		ok = false
 	}
-	return ok
+	return r.heatKind(e) && ok
 }
 
 // grouped reads a field of which only one of a group may be given.
@@ -186,22 +201,6 @@ func (r *reader) grouped(f *Field, e *model.Engine) {
 		return
 	}
 	f.Set(e, v)
-}
-
-// heat sees to it that the hot end is given.
-func (r *reader) heat() {
-	var names []string
-	for i := range r.fields {
-		f := &r.fields[i]
-		if f.Group != heatGroup {
-			continue
-		}
-		if _, given := r.raw[f.Path]; given || r.bad[f.Path] {
-			return
-		}
-		names = append(names, f.Path)
-	}
-	r.fault(r.blockOf("heat.tube_wall"), "engine.heat", &fault{KeyMissing, "the hot end is not given", "give " + orList(names)})
 }
 
 func (r *reader) follow(f *Field, e *model.Engine) {
@@ -259,10 +258,14 @@ func (r *reader) missing(f *Field) {
 
 // blockOf is where the block of a path begins.
 func (r *reader) blockOf(path string) place {
-	if i := strings.LastIndexByte(path, '.'); i >= 0 {
-		if p, ok := r.blocks[path[:i]]; ok {
+	for {
+		i := strings.LastIndexByte(path, '.')
+		if i < 0 {
+			return r.blocks[""]
+		}
+		path = path[:i]
+		if p, ok := r.blocks[path]; ok {
 			return p
 		}
 	}
-	return r.blocks[""]
 }

@@ -30,7 +30,8 @@ type scope struct {
 	fields  []Field
 	outputs []Output
 	engine  *model.Engine
-	usable  bool // the engine says which fields apply
+	absent  []Output // results that mean nothing with this engine
+	usable  bool     // the engine says which fields apply
 }
 
 func (s scope) has(name string) bool {
@@ -250,6 +251,9 @@ func dotted(n ast.Node) (name string, root *ast.IdentifierNode) {
 func (c *compiler) name(n ast.Node, root *ast.IdentifierNode, name string) result {
 	if o, ok := OutputNamed(c.names.outputs, name); ok {
 		return c.push(root, operation{code: opOutput, output: o.at}, result{dimension: o.Quantity.dimension(), reading: o.Quantity == Temperature})
+	}
+	if o, ok := OutputNamed(c.names.absent, name); ok {
+		return c.fail(root, ExprUnknown, name+" applies only "+o.When.Words, "")
 	}
 	if f, ok := FieldNamed(c.names.fields, name); ok {
 		switch {

@@ -81,7 +81,7 @@ func (r *reader) limit(e entry, path string) {
 
 // limited finds what is limited: its program, dimension and whether it is a temperature reading.
 func (r *reader) limited(l *Limit, e entry, parts map[string]scalar, path string) (dim dimension, reading, ok bool) {
-	names := scope{fields: r.fields, outputs: r.outputs, engine: &r.study.Engine, usable: r.usable}
+	names := scope{fields: r.fields, outputs: r.outputs, absent: r.absent, engine: &r.study.Engine, usable: r.usable}
 	if expr, given := parts["expr"]; given {
 		if names.has(e.key) {
 			r.fault(e.where, path, &fault{Contradiction, "a formula needs a name of its own, this one is taken", "call it something else"})
@@ -102,6 +102,10 @@ func (r *reader) limited(l *Limit, e entry, parts map[string]scalar, path string
 	if o, found := OutputNamed(r.outputs, e.key); found {
 		l.Quantity, l.Unit, l.program = o.Quantity, o.Unit, outputProgram(o)
 		return o.Quantity.dimension(), o.Quantity == Temperature, true
+	}
+	if o, found := OutputNamed(r.absent, e.key); found {
+		r.fault(e.where, path, &fault{DoesNotApply, "applies only " + o.When.Words, "take it out"})
+		return dim, false, false
 	}
 	f, found := FieldNamed(r.fields, e.key)
 	switch {
@@ -195,6 +199,10 @@ func (r *reader) aims(e, free entry) {
 	for _, a := range entries {
 		path := join("aims", a.key)
 		o, found := OutputNamed(r.outputs, a.key)
+		if other, known := OutputNamed(r.absent, a.key); known {
+			r.fault(a.where, path, &fault{DoesNotApply, "applies only " + other.When.Words, "aim at another result"})
+			continue
+		}
 		if !found {
 			hint := r.suggest(a.key, outputNames(r.outputs))
 			if hint == "" {

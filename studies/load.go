@@ -45,6 +45,7 @@ type reader struct {
 	repeated map[place]bool    // keys reported as given twice
 	hints    int               // suggestions looked for
 	usable   bool              // layout, drive and heat are known
+	absent   []Output          // results that mean nothing with this machine
 }
 
 // Load reads a study. Each of sets is a path=value that replaces a value of the file. The study is

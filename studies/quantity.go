@@ -29,6 +29,9 @@ const (
 	HeatFlux
 	FilmCoefficient
 	Speed
+	Conductance
+	SpecificEnergy
+	SpecificHeat
 	quantities // their number
 )
 
@@ -36,7 +39,7 @@ const (
 func (q Quantity) String() string {
 	return [quantities]string{"plain number", "length", "area", "volume", "pressure", "temperature",
 		"temperature difference", "speed of rotation", "angle", "power", "torque", "energy", "time", "mass", "mass flow",
-		"heat flux", "film coefficient", "velocity"}[q]
+		"heat flux", "film coefficient", "velocity", "heat conductance", "energy by mass", "heat capacity by mass"}[q]
 }
 
 // unit is one unit of a quantity: SI value = number x mul / div + offset. Two factors, because
@@ -98,6 +101,10 @@ func units() []unit {
 		{"W/(m2 K)", FilmCoefficient, 1, 1, 0},
 		{"kW/(m2 K)", FilmCoefficient, 1e3, 1, 0},
 		{"m/s", Speed, 1, 1, 0},
+		{"W/K", Conductance, 1, 1, 0},
+		{"J/kg", SpecificEnergy, 1, 1, 0},
+		{"MJ/kg", SpecificEnergy, 1e6, 1, 0},
+		{"J/(kg K)", SpecificHeat, 1, 1, 0},
 	}
 }
 

@@ -123,6 +123,10 @@ func TestPlacesInFormulas(t *testing.T) {
 }
 
 func TestMoreMistakes(t *testing.T) {
+	heated := func(source string) []byte { return edit(t, "heat: {tube_wall: 700 degC}", "heat: "+source) }
+	ringed := func(source string) []byte {
+		return edit(t, "heat: {tube_wall: 700 degC}", "heat: "+source, "tube_count: 36", "tube_count: 36\n    ring_diameter: 150 mm")
+	}
 	cases := []struct {
 		name  string
 		data  []byte
@@ -132,7 +136,24 @@ func TestMoreMistakes(t *testing.T) {
 		{"rhombic alpha", edit(t, "layout: gamma", "layout: alpha", "slider-crank", "rhombic"), []Code{Contradiction}},
 		{"two heats", edit(t, "heat: {tube_wall: 700 degC}", "heat: {tube_wall: 700 degC, tube_gas: 600 degC}"), []Code{Contradiction}},
 		{"no heat", edit(t, "heat: {tube_wall: 700 degC}", ""), []Code{KeyMissing}},
-		{"burner", edit(t, "heat: {tube_wall: 700 degC}", "heat: {burner: {fuel: wood}}"), []Code{NotAvailable}},
+		{"bare burner", heated("{burner: {fuel: wood}}"), []Code{KeyMissing, KeyMissing, ChoiceUnknown}},
+		{"burner without fuel", heated("{burner: {tube_wall: 700 degC}}"), []Code{KeyMissing, KeyMissing}},
+		{"burner beside a wall", heated("{tube_wall: 700 degC, burner: {fuel: propane}}"), []Code{Contradiction}},
+		{"burner beside a receiver", heated("{burner: {fuel: propane}, receiver: {power: 20 kW}}"), []Code{Contradiction}},
+		{"fuel and wall", ringed("{burner: {fuel: propane, fuel_power: 20 kW, tube_wall: 700 degC}}"), []Code{Contradiction}},
+		{"two preheaters", ringed("{burner: {fuel: propane, fuel_power: 20 kW, preheater_effectiveness: 0.8, preheater_conductance: 10 W/K}}"), []Code{Contradiction}},
+		{"elements of propane", ringed("{burner: {fuel: propane, fuel_power: 20 kW, elements: {carbon: 1}}}"), []Code{DoesNotApply}},
+		{"given fuel without composition", ringed("{burner: {fuel: given, fuel_power: 20 kW}}"), []Code{KeyMissing}},
+		{"given fuel twice", ringed("{burner: {fuel: given, fuel_power: 20 kW, elements: {carbon: 1}, gases: {methane: 1}}}"), []Code{Contradiction}},
+		{"shares of 90 %", ringed("{burner: {fuel: given, fuel_power: 20 kW, gases: {methane: 60 %, hydrogen: 30 %}}}"), []Code{Contradiction}},
+		{"fuel that does not burn", ringed("{burner: {fuel: given, fuel_power: 20 kW, gases: {nitrogen: 100 %}}}"), []Code{Contradiction}},
+		{"fins without size", ringed("{burner: {fuel: propane, fuel_power: 20 kW, fins: {kind: annular}}}"), []Code{KeyMissing, KeyMissing, KeyMissing}},
+		{"count of annular fins", ringed("{burner: {fuel: propane, fuel_power: 20 kW, fins: {kind: annular, height: 4 mm, thickness: 1 mm, pitch: 4 mm, count: 4}}}"), []Code{DoesNotApply}},
+		{"receiver without size", heated("{receiver: {power: 20 kW}}"), []Code{KeyMissing, KeyMissing, KeyMissing}},
+		{"receiver all aperture", heated("{receiver: {power: 20 kW, aperture_diameter: 200 mm, wall_area: 100 cm2, casing_conductance: 0 W/K}}"), []Code{Contradiction}},
+		{"fuel efficiency without fuel", edit(t, "brake_power: {min: 2 kW}", "fuel_efficiency: {min: 20 %}"), []Code{DoesNotApply}},
+		{"aim at fuel efficiency without fuel", edit(t, "brake_efficiency: most", "fuel_efficiency: most"), []Code{DoesNotApply}},
+		{"formula of fuel without fuel", edit(t, "heater.tube_count * heater.tube_length", "heater.tube_count * heater.tube_length * fuel_efficiency"), []Code{ExprUnknown}},
 		{"unheated above length", edit(t, "unheated_length: 50 mm", "unheated_length: 400 mm"), []Code{Contradiction, Unusual}},
 		{"both written ways", edit(t, "  gas: helium\n", "  gas: helium\n  heater.tube_bore: 4 mm\n"), []Code{KeyTwice}},
 		{"piston bore of a beta", edit(t, "layout: gamma", "layout: beta"), []Code{Contradiction}},

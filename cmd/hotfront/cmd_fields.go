@@ -47,7 +47,7 @@ func fieldRows() []fieldJSON {
 			Usual: f.RangeText(f.Usual), Choices: f.Choices, Applies: f.When.Words, Text: f.Text})
 	}
 	for _, o := range studies.Outputs() {
-		rows = append(rows, fieldJSON{Name: o.Name, Kind: "result", Unit: o.Unit, Text: o.Text})
+		rows = append(rows, fieldJSON{Name: o.Name, Kind: "result", Unit: o.Unit, Applies: o.When.Words, Text: o.Text})
 	}
 	return rows
 }
@@ -67,13 +67,13 @@ func (p *program) fields(o *fieldsOptions) error {
 	inputs := report.Table{Title: "Variables, below engine: in a study", Head: [][]string{{"variable", "unit", "default", "usual", "meaning"}}, Left: []int{1, 2, 3, 4}, Wrap: []int{3, 4}}
 	results := report.Table{Title: "Results, for limits and aims", Head: [][]string{{"result", "unit", "meaning"}}, Left: []int{1, 2}, Wrap: []int{2}}
 	for _, r := range rows {
-		if r.Kind == "result" {
-			results.Rows = append(results.Rows, []string{r.Name, r.Unit, r.Text})
-			continue
-		}
 		text := r.Text
 		if r.Applies != "" {
 			text += "; applies " + r.Applies
+		}
+		if r.Kind == "result" {
+			results.Rows = append(results.Rows, []string{r.Name, r.Unit, text})
+			continue
 		}
 		usual := r.Usual
 		if r.Kind == "choice" {

@@ -249,10 +249,17 @@ func grouped(outputs []studies.Output) [][]*studies.Output {
 				general = "gas"
 			case "swept_volume":
 				general = "machine"
+			case "fuel_power", "solar_efficiency":
+				general = "source"
 			}
 			part = general
-		} else if part == "coolant" {
-			part = "cooler"
+		} else {
+			switch part {
+			case "coolant":
+				part = "cooler"
+			case "burner", "receiver":
+				part = "source"
+			}
 		}
 		k, known := at[part]
 		if !known {
@@ -274,6 +281,7 @@ func (d *Design) ledger(w io.Writer, s Style) error {
 	add := func(name string, v float64, text string) {
 		table.Rows = append(table.Rows, []string{name, watts(v), share(v), text})
 	}
+	d.sourceRows(add)
 	add("heat in", p.HeatIn, "at the hot end")
 	add("shaft work", p.BrakePower, "")
 	add("coolant", p.CoolantHeat, "")
@@ -288,6 +296,25 @@ func (d *Design) ledger(w io.Writer, s Style) error {
 		}
 	}
 	return table.Write(w, s.Listing())
+}
+
+// sourceRows adds where the heat of burner or receiver goes before it reaches the engine.
+func (d *Design) sourceRows(add func(name string, v float64, text string)) {
+	p := &d.Performance
+	switch d.Engine.Heat.Kind {
+	case model.HeatBurner:
+		add("fuel", p.FuelPower, "lower heating value")
+		add("  chimney", p.Burner.Chimney, "with the flue gas")
+		add("  burner casing", p.Burner.Casing, "to the surroundings")
+	case model.HeatReceiver:
+		r := &p.Receiver
+		add("radiation", d.Engine.Heat.Receiver.Power, "into the aperture")
+		add("  window", r.WindowLoss, "reflected or absorbed")
+		add("  reflection", r.Reflection, "by the wall, out of the aperture")
+		add("  re-radiation", r.Reradiation, "by the hot wall, out of the aperture")
+		add("  convection", r.Convection, "out of the aperture")
+		add("  receiver casing", r.Casing, "to the surroundings")
+	}
 }
 
 // lostWork is the work that each part costs [W].
