@@ -18,7 +18,8 @@ type Swing struct {
 // theta rising angles over less than a turn [rad], at least four, and T torque there [N m], periodic. Between two
 // samples the torque is the cubic through the four samples round them. Its integral closes over a turn with
 // the mean of that same interpolation, which differs from the weighted mean of the samples by the error of the
-// interpolation only; the extremes of E are taken where the torque crosses its mean.
+// interpolation only; the extremes of E are taken where the torque crosses its mean: there
+// is at least one of each, unless the torque is constant.
 //
 // Accuracy: the fourth power of the spacing for a smooth torque (3e-5 of dE with 20 samples to the shortest wave,
 // in the tests), the second where it has kinks.
@@ -37,26 +38,24 @@ func Fluctuation(theta, T []float64) Swing {
 	}
 	s := Swing{Mean: total / (2 * math.Pi), HighAt: theta[0], LowAt: theta[0]}
 	E, high, low := 0.0, 0.0, 0.0
-	take := func(E, at float64) {
-		if E > high {
-			high, s.HighAt = E, at
-		}
-		if E < low {
-			low, s.LowAt = E, at
-		}
-	}
 	for k := range n {
 		c.set(theta, T, k, s.Mean)
-		if c.y[1]*c.y[2] < 0 {
+		if c.y[1]*c.y[2] <= 0 {
 			at := c.crossing()
-			take(E+c.integral(c.x[1], at), at)
+			e := E + c.integral(c.x[1], at)
+			if e > high {
+				high, s.HighAt = e, at
+			}
+			if e < low {
+				low, s.LowAt = e, at
+			}
 		}
 		E += c.integral(c.x[1], c.x[2])
-		if k < n-1 { // back at the first sample E is zero again
-			take(E, c.x[2])
-		}
 	}
 	s.Energy = high - low
+	if math.IsNaN(E) { // which no comparison let through
+		s.Energy = E
+	}
 	return s
 }
 

@@ -100,12 +100,36 @@ func TestNaNComesOut(t *testing.T) {
 		if !math.IsNaN(l.Pin1.Load) || !math.IsNaN(l.Up1.Load) || math.IsNaN(l.Up2.Load) {
 			t.Errorf("%s: a force that is no number gives %+v", name(i, &m), l)
 		}
-		if w := Fluctuation(s.theta, q); !math.IsNaN(w.Mean) {
+		if w := Fluctuation(s.theta, q); !math.IsNaN(w.Mean) || !math.IsNaN(w.Energy) {
 			t.Errorf("%s: a torque that is no number gives %+v", name(i, &m), w)
 		}
 		bodies := [2]Body{{Mass: math.NaN()}, {}}
 		if f, _ := Residual(nil, nil, s.motion, s.theta, &bodies, nil, 100); !math.IsNaN(f.Load) {
 			t.Errorf("%s: a mass that is no number gives %+v", name(i, &m), f)
 		}
+	}
+}
+
+func BenchmarkPeaks(b *testing.B) {
+	for _, i := range []int{0, 2, 4} {
+		m := mechanisms()[i]
+		s := sample(&m, 120)
+		P := s.of(math.Cos)
+		b.Run(m.Kind.String(), func(b *testing.B) {
+			b.ReportAllocs()
+			var l Loads
+			for b.Loop() {
+				Peaks(&l, &m, &Masses{}, s.theta, P, P, 100)
+			}
+		})
+	}
+}
+
+func BenchmarkFluctuation(b *testing.B) {
+	b.ReportAllocs()
+	s := sample(nil, 120)
+	T := s.of(math.Cos)
+	for b.Loop() {
+		Fluctuation(s.theta, T)
 	}
 }

@@ -30,7 +30,7 @@ func TestRhombicBalanceOfParts(t *testing.T) {
 				near(t, name(i, &m)+" yoke", P-2*pull*uy, 0, 1e-11)
 				fx, fy = fx+pull*ux, fy+pull*uy
 			}
-			ax, ay := (px-e)/r, py/r // outwards; the crank moves by (-ay, ax) turned the other way: (sin, -cos)
+			ax, ay := (px-e)/r, py/r // outwards; counterclockwise, the pin moves along (-ay, ax)
 			near(t, name(i, &m)+" radial", l.Pin.Radial, fx*ax+fy*ay, 1e-11)
 			near(t, name(i, &m)+" tangential", l.Pin.Tangential, fx*-ay+fy*ax, 1e-11)
 			near(t, name(i, &m)+" size", l.Pin.Size(), math.Hypot(fx, fy), 1e-11)
@@ -57,8 +57,9 @@ func TestRhombicEqualMassesBalance(t *testing.T) {
 	}
 }
 
-// The frame feels what its bearings carry. The force of all pins, turning masses and counterweights of both cranks, mirror
-// images, must be the shaking force (with no gas force: P is inertia alone) upwards, and nothing sideways.
+// The frame feels what its bearings carry. Forces of rods, turning masses and counterweights on both cranks, each from
+// the places of its own pin and yokes, must be the shaking force (with no gas force: P is inertia alone) upwards, and
+// nothing sideways.
 func TestRhombicBearingsCarryTheShaking(t *testing.T) {
 	const omega = 200.0
 	w := RhombicMasses{Displacer: 0.9, Piston: 1.6, Crank: 0.003, Counterweight: 0.011, Ahead: 0.2}
@@ -70,15 +71,26 @@ func TestRhombicBearingsCarryTheShaking(t *testing.T) {
 		for k, at := range s.theta {
 			mo := &s.motion[k]
 			P1, P2 := Transmitted(0, w.Displacer, omega, mo.A1), Transmitted(0, w.Piston, omega, mo.A2)
-			pin := Rhombic(P1, P2, m.Radius, m.Rod, m.Eccentricity, at).Pin.Add(Turning(w.Crank, omega))
-			sin, cos := math.Sincos(at)
-			rightX, rightY := -pin.Radial*cos+pin.Tangential*sin, -pin.Radial*sin-pin.Tangential*cos
-			u := w.Counterweight * omega * omega
-			rightX += u * math.Cos(at+w.Ahead)
-			rightY += u * math.Sin(at+w.Ahead)
-			leftX, leftY := -rightX, rightY
-			near(t, name(i, &m)+" upwards", rightY+leftY, RhombicShaking(mo, at, &w, omega), 1e-10)
-			near(t, name(i, &m)+" sideways", rightX+leftX, 0, 0)
+			l := Rhombic(P1, P2, m.Radius, m.Rod, m.Eccentricity, at)
+			sumX, sumY, moment := 0.0, 0.0, 0.0
+			for _, c := range []struct{ centre, angle, sense float64 }{
+				// The right crank turns counterclockwise, its pin next to the axis at theta = 0; the left one is its mirror image.
+				{m.Eccentricity, math.Pi + at, 1}, {-m.Eccentricity, -at, -1},
+			} {
+				ax, ay := math.Cos(c.angle), math.Sin(c.angle) // outwards to the pin
+				px, py := c.centre+m.Radius*ax, m.Radius*ay
+				u := w.Counterweight * omega * omega
+				away := c.angle + math.Pi + c.sense*w.Ahead
+				fx, fy := w.Crank*omega*omega*ax+u*math.Cos(away), w.Crank*omega*omega*ay+u*math.Sin(away)
+				for _, rod := range [][2]float64{{mo.Y1, l.Rod1}, {mo.Y2, l.Rod2}} {
+					fx += rod[1] * -px / m.Rod
+					fy += rod[1] * (rod[0] - py) / m.Rod
+				}
+				sumX, sumY, moment = sumX+fx, sumY+fy, moment+c.centre*fy
+			}
+			near(t, name(i, &m)+" upwards", sumY, RhombicShaking(mo, at, &w, omega), 1e-10)
+			near(t, name(i, &m)+" sideways", sumX, 0, 1e-11)
+			near(t, name(i, &m)+" moment", moment, 0, 1e-12)
 		}
 	}
 }
@@ -152,6 +164,18 @@ func TestRhombicPeaks(t *testing.T) {
 		var l Loads
 		Peaks(&l, &m, &Masses{Counterweight: mass * m.Radius}, s.theta, P1, P2, omega)
 		near(t, name(i, &m)+" main", l.Main.Load, want, 1e-9)
+		// Rods that turn with the pin count on the pin and on the bearings, the crank on the bearings alone: more
+		// counterweight by as much leaves the bearings as they were.
+		var heavy Loads
+		w := Masses{Rod1: 0.2, Rod2: 0.3, Crank: 0.004, Counterweight: (mass+0.5)*m.Radius + 0.004}
+		Peaks(&heavy, &m, &w, s.theta, P1, P2, omega)
+		near(t, name(i, &m)+" main with rods", heavy.Main.Load, l.Main.Load, 1e-9)
+		pin := 0.0
+		for k, at := range s.theta {
+			p := Rhombic(P1[k], P2[k], m.Radius, m.Rod, m.Eccentricity, at).Pin
+			pin = max(pin, math.Hypot(p.Radial+0.5*m.Radius*omega*omega, p.Tangential))
+		}
+		near(t, name(i, &m)+" pin with rods", heavy.Pin1.Load, pin, 1e-9)
 		if l.Pin1 != l.Pin2 || !(l.Pin1.Load > 0) || l.Side1 != (Peak{}) || !(l.Rod1.Load > l.Up1.Load/2) {
 			t.Errorf("%s: %+v", name(i, &m), l)
 		}

@@ -117,4 +117,26 @@ func TestPeaks(t *testing.T) {
 		side = max(side, math.Abs(P2[k]*math.Tan(math.Asin(0.03/0.12*math.Sin(at)))))
 	}
 	near(t, "side", l.Side2.Load, side, 1e-9)
+
+	// Unequal bodies at an odd phase, with rods: each pin by the places of its own parts.
+	m = drive.Mechanism{Kind: drive.SliderCrank, Phase: 1.2, Rod: 0.05, Stroke1: 0.07, Stroke2: 0.05}
+	s = sample(&m, 100)
+	forces()
+	P1[17] += 9000
+	Peaks(&l, &m, &Masses{Rod1: 0.2, Rod2: 0.4}, s.theta, P1, P2, omega)
+	pin1, pin2, side1 := 0.0, 0.0, 0.0
+	for k, at := range s.theta {
+		load := func(P, r, alpha, rod float64) (pin, side float64) {
+			x, y := r*math.Sin(alpha), -r*math.Cos(alpha)
+			side = P * x / math.Sqrt(m.Rod*m.Rod-x*x)
+			return math.Hypot(-side+rod*x*omega*omega, P+rod*y*omega*omega), math.Abs(side)
+		}
+		p, c := load(P1[k], 0.035, at+1.2, 0.2)
+		pin1, side1 = max(pin1, p), max(side1, c)
+		p, _ = load(P2[k], 0.025, at, 0.4)
+		pin2 = max(pin2, p)
+	}
+	near(t, "pin of the first", l.Pin1.Load, pin1, 1e-9)
+	near(t, "pin of the second", l.Pin2.Load, pin2, 1e-9)
+	near(t, "side of the first", l.Side1.Load, side1, 1e-9)
 }

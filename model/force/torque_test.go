@@ -43,6 +43,11 @@ func TestTorqueGivesTheWork(t *testing.T) {
 			size += s.weight[k] * math.Abs(T[k])
 		}
 		near(t, name(i, &m)+" work of the inertia torque", Work(s.weight, T)/size, 0, 1e-13)
+		for k := range n { // as the axial forces have it
+			mo := &s.motion[k]
+			P1, P2 := Transmitted(F1[k], m1, omega, mo.A1), Transmitted(F2[k], m2, omega, mo.A2)
+			near(t, name(i, &m)+" axial forces", P1*mo.V1+P2*mo.V2, F1[k]*mo.V1+F2[k]*mo.V2+T[k], 1e-12*size)
+		}
 		// It is the loss of kinetic energy: dE of inertia alone is what the bodies hold at most, less at least.
 		high, low := math.Inf(-1), math.Inf(1)
 		for k := range fine {
