@@ -11,9 +11,10 @@ import (
 type Layout uint8
 
 const (
-	Alpha Layout = iota // two pistons in two cylinders
-	Beta                // displacer and piston in one cylinder
-	Gamma               // displacer and piston in cylinders of their own
+	Alpha        Layout = iota // two pistons in two cylinders
+	Beta                       // displacer and piston in one cylinder
+	Gamma                      // displacer and piston in cylinders of their own
+	DoubleActing               // a ring of cylinders with one piston each: hot space above it, cold space of the neighbour's circuit below
 )
 
 // MatrixKind is the kind of porous matrix in the regenerator.
@@ -38,6 +39,7 @@ const (
 // defaults live in the table of fields of package studies.
 type Engine struct {
 	Layout         Layout
+	Cylinders      int // of a double-acting machine, 3 to 12; as many circuits, and all parts below are those of one
 	Gas            gas.Kind
 	ChargePressure float64 // time mean of the working pressure over a cycle [Pa]
 	Speed          float64 // revolutions per second [Hz]
@@ -45,7 +47,7 @@ type Engine struct {
 	Drive Drive
 
 	Displacer         Reciprocator // beta, gamma
-	Piston            Reciprocator // beta, gamma; in a beta its bore is the displacer's cylinder bore
+	Piston            Reciprocator // beta, gamma, double-acting; in a beta its bore is the displacer's cylinder bore
 	ExpansionPiston   Reciprocator // alpha
 	CompressionPiston Reciprocator // alpha
 
@@ -68,23 +70,40 @@ type Engine struct {
 	Coolant Coolant
 }
 
+// circuits is the number of equal gas circuits of the machine.
+func (e *Engine) circuits() float64 {
+	if e.Layout == DoubleActing {
+		return float64(e.Cylinders)
+	}
+	return 1
+}
+
+// HasDisplacer tells whether a displacer, not a piston, stands between hot and cold end.
+func (l Layout) HasDisplacer() bool { return l == Beta || l == Gamma }
+
 // Drive is the mechanism that moves the pistons.
 type Drive struct {
 	Kind         drive.Kind
-	PhaseAngle   float64 // expansion volume (displacer) leads the compression volume (piston) by this [rad]; sinusoidal, slider-crank
+	PhaseAngle   float64 // expansion volume (displacer) leads the compression volume (piston) by this [rad]; sinusoidal, slider-crank; not read in a double-acting machine
 	RodLength    float64 // connecting rod [m]; slider-crank, rhombic
 	CrankRadius  float64 // [m]; rhombic
 	Eccentricity float64 // distance of the crank axis from the cylinder axis [m]; rhombic
+
+	SpeedFluctuation float64 // largest less smallest speed over the mean that the flywheel is to allow [-]; 0 = no flywheel worked out
+	CylinderAngle    float64 // from the axis of the first body to that of the second, in the sense of rotation [rad]; alpha, gamma
+	CylinderDistance float64 // of both axes along the shaft [m]; alpha, gamma
+	CylinderCircle   float64 // diameter of the circle on which the cylinders stand [m]; double-acting, 0 = not given
 }
 
 // Reciprocator is a displacer or a piston.
 type Reciprocator struct {
 	Bore       float64 // of its cylinder [m]
 	Stroke     float64 // [m]; with a rhombic drive it follows from the drive and is not given
-	Rod        float64 // rod through the compression space [m]; displacer only, 0 = none
-	Length     float64 // of the hot body (displacer, dome of an expansion piston) from hot face to seal [m]
+	Rod        float64 // rod through the compression space [m]; displacer and double-acting piston only, 0 = none
+	Length     float64 // of the hot body (displacer, dome of an expansion or double-acting piston) from hot face to seal [m]
 	Gap        float64 // radial gap between hot body and cylinder wall [m]
 	Wall       float64 // wall thickness of the hollow hot body [m]
+	Mass       float64 // that moves, with its rod and the connecting rod's share [kg]; 0 = not given, inertia not counted
 	SealGap    float64 // radial gap of the seal that stands for its leakage [m]; 0 = tight
 	SealLength float64 // length of that seal [m]
 }
@@ -196,7 +215,7 @@ func (h *Heat) Held() bool {
 // Coolant cools the outside of the cooler tubes (water).
 type Coolant struct {
 	Inlet float64 // temperature [K]
-	Flow  float64 // [kg/s]
+	Flow  float64 // [kg/s], of the whole machine
 	Film  float64 // outer film coefficient [W/(m2 K)]
 }
 

@@ -29,6 +29,7 @@ func (w *Workspace) evaluate(dst *Performance, e *Engine, c *Corrections) Cause 
 	if cause := w.geometry.set(e); cause != None {
 		return cause
 	}
+	dst.Steps = w.steps(e)
 	if e.Heat.Held() && e.Heat.Temperature <= e.Coolant.Inlet+1 {
 		return ColderThanCoolant
 	}
@@ -54,6 +55,7 @@ func (w *Workspace) evaluate(dst *Performance, e *Engine, c *Corrections) Cause 
 	if cause := w.setSource(dst, e); cause != None {
 		return cause
 	}
+	w.setDriveLoads(&dst.Drive, e)
 	w.setMetal(dst, e)
 	w.setWarnings(dst, e)
 	return None
@@ -76,11 +78,11 @@ func (w *Workspace) run(dst *Performance, e *Engine, c *Corrections, hot float64
 		return NoConvergence
 	}
 	w.setFriction(e)
-	w.setPerformance(dst, e, c)
-	if dst.ForcedWork < 0 {
+	if !w.setForces(e, c.FlowFriction) {
 		return BufferTooSmall
 	}
-	if heater := w.heat(cycle.PartHeater) * e.Speed; heater <= 0 || dst.HeatIn < leastHeat*heater {
+	w.setPerformance(dst, e, c)
+	if heater := w.heat(cycle.PartHeater) * e.circuits() * e.Speed; heater <= 0 || dst.HeatIn < leastHeat*heater {
 		return NoHeat
 	}
 	return None
@@ -98,11 +100,11 @@ func (c *Corrections) valid() bool {
 // finite tells whether the numbers that everything else follows from are finite.
 func (p *Performance) finite() bool {
 	sum := p.BrakePower + p.HeatIn + p.CoolantHeat + p.PressureMax + p.HeaterStressUtilisation +
-		p.HeaterMetalTemperature + p.Mach + p.Losses.sum() + p.HotMetalMass + p.FuelPower + p.Burner.Chimney + p.Receiver.Reradiation
+		p.HeaterMetalTemperature + p.Mach + p.Losses.sum() + p.HotMetalMass + p.Drive.Flywheel + p.Drive.PinLoad + p.Drive.ResidualForce + p.FuelPower + p.Burner.Chimney + p.Receiver.Reradiation
 	return !math.IsNaN(sum) && !math.IsInf(sum, 0)
 }
 
 func (l *Losses) sum() float64 {
-	return l.FlowFriction + l.CycleWork + l.Leakage + l.Drive + l.SealFriction + l.Reheat + l.MatrixConduction +
+	return l.FlowFriction + l.CycleWork + l.Leakage + l.GasSpring + l.Drive + l.SealFriction + l.Reheat + l.MatrixConduction +
 		l.CanisterConduction + l.CylinderConduction + l.DisplacerConduction + l.Shuttle + l.AppendixGap + l.DisplacerLeakage
 }

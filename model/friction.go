@@ -8,11 +8,12 @@ import (
 
 // friction holds the flow losses of one cycle, uncorrected.
 type friction struct {
-	heater, regenerator, cooler float64                 // power lost [W]
-	hotDucts, coldDucts         float64                 // power lost [W]
-	mach                        float64                 // largest Mach number anywhere
-	reMean, reMax               [cycle.Parts]float64    // Reynolds number: cycle mean and largest
-	drop                        [cycle.MaxSteps]float64 // expansion less compression space at full steps [Pa]
+	heater, regenerator, cooler float64                     // power lost [W]
+	hotDucts, coldDucts         float64                     // power lost [W]
+	mach                        float64                     // largest Mach number anywhere
+	reMean, reMax               [cycle.Parts]float64        // Reynolds number: cycle mean and largest
+	drop                        [2 * cycle.MaxSteps]float64 // expansion less compression space, at the samples of loads [Pa]
+	power                       [2 * cycle.MaxSteps]float64 // lost in all parts, at the same [W]
 }
 
 // section is a length of gas path with friction.
@@ -97,9 +98,8 @@ func (w *Workspace) drop(cut *section, a, b, i int, part cycle.Part, n float64) 
 			fr.reMax[part] = max(fr.reMax[part], re)
 		}
 		power += weights[k&1] * dp * flow * v
-		if k&1 == 1 {
-			fr.drop[k>>1] += dp
-		}
+		fr.drop[k] += dp
+		fr.power[k] += dp * flow * v
 		fast = max(fast, speed)
 	}
 	fr.mach = max(fr.mach, fast/sound)

@@ -29,6 +29,8 @@ const (
 	// pitchLimit is the smallest pitch of tubes on their ring over outer diameter that leaves metal
 	// between the holes for brazing or welding (common practice, no source).
 	pitchLimit = 1.15
+	// leastCylinders and mostCylinders are those of a double-acting machine: with two the hot space would not lead.
+	leastCylinders, mostCylinders = 3, 12
 	// bundlePitch is the pitch of cooler tubes in a triangular pattern over outer diameter (common
 	// practice in shell-and-tube exchangers, no source).
 	bundlePitch = 1.3
@@ -37,8 +39,14 @@ const (
 // set fills the geometry and reports what cannot be built.
 func (g *geometry) set(e *Engine) Cause {
 	g.hot, g.cold = &e.Displacer, &e.Piston
-	if e.Layout == Alpha {
+	switch e.Layout {
+	case Alpha:
 		g.hot, g.cold = &e.ExpansionPiston, &e.CompressionPiston
+	case DoubleActing:
+		g.hot = &e.Piston
+		if e.Cylinders < leastCylinders || e.Cylinders > mostCylinders {
+			return BadInput
+		}
 	}
 	h, r, c := &e.Heater, &e.Regenerator, &e.Cooler
 	if !finiteInputs(e, g) {
@@ -72,7 +80,7 @@ func (g *geometry) set(e *Engine) Cause {
 	g.coolerEnds = float64(c.TubeCount) * circle(c.TubeBore) * max(c.TubeLength-c.CooledLength, 0)
 	g.matrixArea = float64(r.Count) * (circle(r.Diameter) - circle(r.InnerDiameter))
 	g.matrixVolume = g.matrixArea * r.Length
-	if h.RingDiameter > 0 && g.pitchRatio(h) < pitchLimit {
+	if h.RingDiameter > 0 && g.pitchRatio(e) < pitchLimit {
 		return TubesOverlap
 	}
 	if c.ShellDiameter > 0 && g.bundleDiameter(c) > c.ShellDiameter {
@@ -81,13 +89,15 @@ func (g *geometry) set(e *Engine) Cause {
 	return None
 }
 
-// pitchRatio is the distance of neighbouring tubes on the mean ring over their outer diameter.
-func (g *geometry) pitchRatio(h *Heater) float64 {
-	return h.RingDiameter * math.Sin(math.Pi/max(h.tubesPerRow(), 2)) / g.heaterOuter
+// pitchRatio is the distance of neighbouring tubes on the mean ring, on which all circuits stand, over their outer diameter.
+func (g *geometry) pitchRatio(e *Engine) float64 {
+	return e.Heater.RingDiameter * math.Sin(math.Pi/max(e.tubesPerRow(), 2)) / g.heaterOuter
 }
 
 // tubesPerRow is the mean number of tubes on a ring; no number of rows given counts as one.
-func (h *Heater) tubesPerRow() float64 { return float64(h.TubeCount) / float64(max(h.Rows, 1)) }
+func (e *Engine) tubesPerRow() float64 {
+	return e.circuits() * float64(e.Heater.TubeCount) / float64(max(e.Heater.Rows, 1))
+}
 
 // bundleDiameter is the diameter of the circle that holds the cooler tubes in a triangular pattern:
 // each tube takes sqrt(3)/2 of the square of the pitch, and the rim is ragged by half a pitch all round.
@@ -113,7 +123,8 @@ func finiteInputs(e *Engine, g *geometry) bool {
 	}
 	notNegative := [...]float64{
 		e.ExpansionClearance, e.CompressionClearance, e.BufferVolume, g.hot.Rod, g.hot.Gap, g.hot.Wall,
-		g.hot.SealGap, g.hot.SealLength, g.cold.SealGap, g.cold.SealLength,
+		g.hot.SealGap, g.hot.SealLength, g.cold.SealGap, g.cold.SealLength, g.hot.Mass, g.cold.Mass,
+		e.Drive.SpeedFluctuation, e.Drive.CylinderAngle, e.Drive.CylinderDistance, e.Drive.CylinderCircle,
 		e.Cylinder.Wall, h.EndLoss, float64(h.Rows), h.RingDiameter, h.FluxPeaking - 1, h.StressFactor - 1,
 		r.InnerDiameter, r.Porosity, r.CanisterWall, c.EndLoss, c.ShellDiameter,
 		e.ExpansionDuct.Volume, e.ExpansionDuct.Area, e.ExpansionDuct.Loss,

@@ -19,8 +19,8 @@ const hotShare = 0.5
 //
 //	heat in      = cycle heat + heat that goes round the cycle - friction heat made on the hot side
 //	coolant heat = cycle heat + heat that goes round the cycle + friction heat made on the cold side
-//	               + p-V work lost to what one dimension leaves out + leakage
-//	brake power  = p-V power x cycle-work factor - flow loss - leakage - drive - seals
+//	               + p-V work lost to what one dimension leaves out + leakage + gas spring
+//	brake power  = p-V power x cycle-work factor - flow loss - leakage - gas spring - drive - seals
 func (w *Workspace) setPerformance(dst *Performance, e *Engine, c *Corrections) {
 	g, r, fr := &w.geometry, &w.Cycle, &w.friction
 	f := e.Speed
@@ -39,19 +39,18 @@ func (w *Workspace) setPerformance(dst *Performance, e *Engine, c *Corrections) 
 	dst.CoolerFlowLoss = c.FlowFriction * fr.cooler
 	l.CycleWork = (1 - c.CycleWork) * math.Abs(dst.PVPower)
 	l.Leakage = w.pistonLeakage(e)
-	dst.IndicatedPower = dst.PVPower - l.CycleWork - l.FlowFriction - l.Leakage
-
-	forced := w.forcedWork(e)
-	w.setDrive(dst, e, c, forced)
+	l.GasSpring = w.loads.spring * f
+	dst.IndicatedPower = dst.PVPower - l.CycleWork - l.FlowFriction - l.Leakage - l.GasSpring
+	forced := w.setDrive(dst, e, c)
 
 	round := l.CanisterConduction + l.CylinderConduction + l.DisplacerConduction + l.Shuttle + l.AppendixGap + l.DisplacerLeakage
 	dst.HeatIn = w.heat(cycle.PartHeater)*f + round - hotFriction
-	dst.CoolantHeat = -w.heat(cycle.PartCooler)*f + round + coldFriction + l.CycleWork + l.Leakage
+	dst.CoolantHeat = -w.heat(cycle.PartCooler)*f + round + coldFriction + l.CycleWork + l.Leakage + l.GasSpring
 	dst.BrakeEfficiency = dst.BrakePower / dst.HeatIn
 	dst.IndicatedEfficiency = dst.IndicatedPower / dst.HeatIn
 	dst.CarnotEfficiency = 1 - e.Coolant.Inlet/dst.HeaterOuterTemperature
 	dst.EnergyResidual = (dst.HeatIn - dst.BrakePower - dst.CoolantHeat - l.Drive - l.SealFriction) / dst.HeatIn
-	dst.CoolantOutlet = e.Coolant.Inlet + dst.CoolantHeat/(e.Coolant.Flow*waterHeat)
+	dst.CoolantOutlet = e.Coolant.Inlet + e.circuits()*dst.CoolantHeat/(e.Coolant.Flow*waterHeat)
 	dst.Torque = dst.BrakePower / (2 * math.Pi * f)
 
 	dst.SweptVolume, dst.DeadVolume = w.sweptAndDead()
@@ -68,6 +67,25 @@ func (w *Workspace) setPerformance(dst *Performance, e *Engine, c *Corrections) 
 	dst.Mach = fr.mach
 	dst.HeaterReynolds, dst.RegeneratorReynolds, dst.CoolerReynolds =
 		fr.reMean[cycle.PartHeater], fr.reMean[cycle.PartRegenerator], fr.reMean[cycle.PartCooler]
+	dst.wholeMachine(e.circuits())
+	w.setTorque(dst, e, c, forced)
+}
+
+// wholeMachine turns the results of one circuit into those of n equal ones.
+func (p *Performance) wholeMachine(n float64) {
+	if n == 1 {
+		return
+	}
+	l := &p.Losses
+	for _, v := range [...]*float64{
+		&p.BrakePower, &p.IndicatedPower, &p.PVPower, &p.FlowLoss, &p.HeatIn, &p.CoolantHeat, &p.Torque, &p.ForcedWork,
+		&p.SweptVolume, &p.DeadVolume, &p.GasMass, &p.HeaterFlowLoss, &p.RegeneratorFlowLoss, &p.CoolerFlowLoss,
+		&p.RegeneratorHeat, &p.RegeneratorPressureHeat,
+		&l.FlowFriction, &l.CycleWork, &l.Leakage, &l.GasSpring, &l.Drive, &l.SealFriction, &l.Reheat, &l.MatrixConduction, &l.CanisterConduction,
+		&l.CylinderConduction, &l.DisplacerConduction, &l.Shuttle, &l.AppendixGap, &l.DisplacerLeakage,
+	} {
+		*v *= n
+	}
 }
 
 // hotFriction is the part of the flow loss that turns into heat on the hot side [W].
@@ -194,12 +212,21 @@ func (w *Workspace) setHeatLosses(dst *Performance, e *Engine, c *Corrections) {
 	}
 	l.AppendixGap = gap.Loss()
 	if e.Layout != Alpha && g.hot.SealGap > 0 && g.hot.SealLength > 0 {
-		for n := range p.Fine.Steps {
-			w.upper[n] = tr.Pressure[2*n+1]
-			w.lower[n] = c.FlowFriction * w.friction.drop[n]
+		above, across := tr.Pressure[:w.loads.count], w.loads.scratch[:w.loads.count]
+		if e.Layout == DoubleActing {
+			shift(across, above, 1, e.Cylinders)
+			for k := range across {
+				across[k] = above[k] - across[k]
+			}
+		} else {
+			for k := range across {
+				across[k] = c.FlowFriction * w.friction.drop[k]
+			}
 		}
-		l.DisplacerLeakage = loss.SealHeat(g.hot.Bore, g.hot.SealGap, g.hot.SealLength, mu, w.gas.R*tc, w.state.Cp, drop,
-			w.upper[:p.Fine.Steps], w.lower[:p.Fine.Steps])
+		l.DisplacerLeakage = loss.SealHeat(g.hot.Bore, g.hot.SealGap, g.hot.SealLength, mu, w.gas.R*tc, w.state.Cp, drop, above, across)
+		if e.Layout == DoubleActing {
+			l.DisplacerLeakage *= loss.GapReturn(2*l.DisplacerLeakage/drop, g.hot.Bore, g.hot.Gap, g.hot.Length, k)
+		}
 	}
 }
 

@@ -97,7 +97,7 @@ func (w *Workspace) setPath(e *Engine, hot float64) {
 		// of that mean with the heat given off acts as one more resistance.
 		Resistance: wallResistance(c.TubeBore, g.coolerOuter, length, tubes, alloy.Conductivity(cold)) +
 			1/(e.Coolant.Film*tubes*math.Pi*g.coolerOuter*length) +
-			float64(n)/(2*e.Coolant.Flow*waterHeat),
+			float64(n)*e.circuits()/(2*e.Coolant.Flow*waterHeat),
 	}
 	tube.Volume = tube.Area * length
 	for range n {

@@ -4,7 +4,7 @@ package model
 // in package studies; the comment of each field is the text shown to users.
 type Performance struct {
 	BrakePower             float64 // power at the shaft [W]
-	IndicatedPower         float64 // p-V power after flow friction, cycle-work factor and leakage [W]
+	IndicatedPower         float64 // p-V power after flow friction, cycle-work factor, leakage and gas spring [W]
 	PVPower                float64 // p-V power of both spaces at uniform pressure, before flow friction [W]
 	FlowLoss               float64 // power lost to flow friction, corrected [W]
 	HeatIn                 float64 // heat into the engine at the hot end [W]
@@ -66,6 +66,8 @@ type Performance struct {
 	CoolerFlowLoss        float64 // [W]
 	CoolantOutlet         float64 // [K]
 
+	Drive DriveResult
+
 	FuelPower       float64 // lower heating value times fuel flow [W]
 	FuelEfficiency  float64 // brake power over fuel power [-]
 	Burner          BurnerResult
@@ -116,6 +118,7 @@ type Losses struct {
 	FlowFriction        float64 // all parts; heat to the gas where it is made [W]
 	CycleWork           float64 // p-V work lost to what one dimension leaves out; to the coolant [W]
 	Leakage             float64 // past the piston seal; to the coolant [W]
+	GasSpring           float64 // in a closed buffer space, by heat to its walls; to the coolant [W]
 	Drive               float64 // in the drive, by Senft's theorem; to the surroundings [W]
 	SealFriction        float64 // seals and bearings; to the surroundings [W]
 	Reheat              float64 // enthalpy carried through the regenerator by gas that lags behind its metal; to the coolant, inside the cycle [W]

@@ -17,6 +17,7 @@ type SecondLaw struct {
 	FlowFriction     float64 // all parts [W/K]
 	CycleWork        float64 // what the cycle-work factor stands for [W/K]
 	Leakage          float64 // past piston and displacer seals [W/K]
+	GasSpring        float64 // buffer space [W/K]
 	Conduction       float64 // canister, cylinder wall and hot body [W/K]
 	Shuttle          float64 // [W/K]
 	AppendixGap      float64 // [W/K]
@@ -44,7 +45,7 @@ func SecondLawGrid() Grid {
 func SecondLawOf(dst *SecondLaw, p *Performance, e *Engine, w *Workspace) {
 	var parts [cycle.Parts]float64
 	w.solver.Entropy(&parts)
-	f := e.Speed
+	f := e.Speed * e.circuits()
 	hot, cold := p.HeaterOuterTemperature, e.Coolant.Inlet
 	*dst = SecondLaw{
 		ExpansionSpace:   parts[cycle.PartExpansion] * f,
@@ -71,6 +72,7 @@ func SecondLawOf(dst *SecondLaw, p *Performance, e *Engine, w *Workspace) {
 	dst.FlowFriction = hotFriction/hot + (l.FlowFriction-hotFriction)/cold
 	dst.CycleWork = l.CycleWork / cold
 	dst.Leakage = l.Leakage/cold + l.DisplacerLeakage*down
+	dst.GasSpring = l.GasSpring / cold
 	dst.Conduction = (l.CanisterConduction + l.CylinderConduction + l.DisplacerConduction) * down
 	dst.Shuttle = l.Shuttle * down
 	dst.AppendixGap = l.AppendixGap * down
@@ -88,12 +90,12 @@ type SecondLawItem struct {
 }
 
 // Items lists the entries in the order of the heat's way.
-func (s *SecondLaw) Items() [15]SecondLawItem {
-	return [15]SecondLawItem{
+func (s *SecondLaw) Items() [16]SecondLawItem {
+	return [16]SecondLawItem{
 		{"heater_wall", s.HeaterWall}, {"heater_film", s.HeaterFilm}, {"expansion_space", s.ExpansionSpace},
 		{"ducts", s.Ducts}, {"regenerator", s.Regenerator}, {"compression_space", s.CompressionSpace},
 		{"cooler_film", s.CoolerFilm}, {"cooler_wall", s.CoolerWall}, {"flow_friction", s.FlowFriction},
-		{"cycle_work", s.CycleWork}, {"leakage", s.Leakage}, {"conduction", s.Conduction},
+		{"cycle_work", s.CycleWork}, {"leakage", s.Leakage}, {"gas_spring", s.GasSpring}, {"conduction", s.Conduction},
 		{"shuttle", s.Shuttle}, {"appendix_gap", s.AppendixGap}, {"drive", s.Drive},
 	}
 }

@@ -71,8 +71,8 @@ func (s *source) prepareBurner(e *Engine, g *geometry) Cause {
 		PreheaterEffectiveness: in.PreheaterEffectiveness, PreheaterConductance: in.PreheaterConductance,
 		Ambient: in.Ambient, CasingShare: in.CasingShare, CasingConductance: in.CasingConductance,
 		Bank: heat.Bank{
-			Arrangement: in.Arrangement, Rows: h.Rows, TubesPerRow: h.tubesPerRow(), Diameter: g.heaterOuter,
-			TransversePitch: g.pitchRatio(h) * g.heaterOuter, LongitudinalPitch: in.RowPitch * g.heaterOuter,
+			Arrangement: in.Arrangement, Rows: h.Rows, TubesPerRow: e.tubesPerRow(), Diameter: g.heaterOuter,
+			TransversePitch: g.pitchRatio(e) * g.heaterOuter, LongitudinalPitch: in.RowPitch * g.heaterOuter,
 			Length: h.HeatedLength, Fins: fins,
 		},
 		FlameEmissivity: in.FlameEmissivity, WallEmissivity: in.WallEmissivity, RadiantArea: in.RadiantArea,

@@ -54,7 +54,7 @@ func (w *Workspace) setMetal(dst *Performance, e *Engine) {
 	dst.HeaterThermalStress = metal.ThermalStressBore(alloy.Young(mean), alloy.Expansion(mean), poisson,
 		dst.HeaterMetalTemperature-across, dst.HeaterMetalTemperature, 0.5*h.TubeBore, 0.5*g.heaterOuter)
 	if h.RingDiameter > 0 {
-		dst.HeaterPitchRatio = g.pitchRatio(h)
+		dst.HeaterPitchRatio = g.pitchRatio(e)
 	}
 	dst.CoolerBundleDiameter = g.bundleDiameter(&e.Cooler)
 
@@ -71,10 +71,10 @@ func (w *Workspace) setMetal(dst *Performance, e *Engine) {
 	if r.InnerDiameter > 0 {
 		shell += pi * (r.InnerDiameter - r.CanisterWall) * r.CanisterWall
 	}
-	dst.HotMetalMass = alloy.Density*float64(h.TubeCount)*(circle(g.heaterOuter)-circle(h.TubeBore))*h.TubeLength +
+	dst.HotMetalMass = e.circuits() * (alloy.Density*float64(h.TubeCount)*(circle(g.heaterOuter)-circle(h.TubeBore))*h.TubeLength +
 		wire.Density*g.matrixVolume*(1-r.Porosity) +
 		canister.Density*float64(r.Count)*shell*r.Length +
-		cylinder.Density*pi*(g.hot.Bore+e.Cylinder.Wall)*e.Cylinder.Wall*g.hot.Length
+		cylinder.Density*pi*(g.hot.Bore+e.Cylinder.Wall)*e.Cylinder.Wall*g.hot.Length)
 }
 
 // vessel is a cylindrical wall under the working pressure.

@@ -16,6 +16,14 @@ func (w *Workspace) setMotion(e *Engine) Cause {
 		Kind: e.Drive.Kind, Phase: e.Drive.PhaseAngle, Rod: e.Drive.RodLength, Radius: e.Drive.CrankRadius,
 		Eccentricity: e.Drive.Eccentricity, Stroke1: g.hot.Stroke, Stroke2: g.cold.Stroke,
 	}
+	if e.Layout == DoubleActing {
+		// The second body is the neighbour in whose cylinder this circuit's cold space is. It runs ahead, so that the
+		// hot space leads the cold one by half a turn less this angle.
+		m.mechanism.Phase = -2 * math.Pi / float64(e.Cylinders)
+		if e.Drive.Kind != drive.Sinusoidal && e.Drive.Kind != drive.SliderCrank {
+			return BadInput
+		}
+	}
 	switch m.mechanism.Check() {
 	case drive.None:
 	case drive.RodTooShort:
@@ -34,12 +42,22 @@ func (w *Workspace) setMotion(e *Engine) Cause {
 	}
 
 	w.Path.Period = 1 / e.Speed
-	w.fillMotion(&w.Path.Fine, e, w.Grid.Steps)
 	w.fillMotion(&w.Path.Coarse, e, w.Grid.CoarseSteps)
+	w.fillMotion(&w.Path.Fine, e, w.steps(e))
 	return None
 }
 
-// fillMotion fills the volumes over a cycle of the given number of steps.
+// steps is the number of time steps a cycle: the grid's, or in a double-acting machine the next multiple of the
+// number of cylinders, so that a neighbour's pressure is at hand at every sample.
+func (w *Workspace) steps(e *Engine) int {
+	if e.Layout != DoubleActing {
+		return w.Grid.Steps
+	}
+	return (w.Grid.Steps + e.Cylinders - 1) / e.Cylinders * e.Cylinders
+}
+
+// fillMotion fills the volumes over a cycle of the given number of steps; the samples of the loads are those of the
+// last call.
 func (w *Workspace) fillMotion(m *cycle.Motion, e *Engine, steps int) {
 	m.Steps = steps
 	if steps == 0 {
@@ -57,6 +75,7 @@ func (w *Workspace) fillMotion(m *cycle.Motion, e *Engine, steps int) {
 		var dve, dvc float64
 		m.Ve[k], dve, m.Vc[k], dvc = w.volumes(e, &at)
 		m.DVe[k], m.DVc[k] = dve*omega, dvc*omega
+		w.loads.sample(k, steps, c*dth, &at)
 	}
 	w.motion.mechanism.At(&at, 0)
 	m.Ve0, _, m.Vc0, _ = w.volumes(e, &at)
@@ -71,6 +90,8 @@ func (w *Workspace) volumes(e *Engine, at *drive.Motion) (ve, dve, vc, dvc float
 	switch e.Layout {
 	case Alpha:
 		vc, dvc = g.coldArea*(x.Top2-at.Y2), -g.coldArea*at.V2
+	case DoubleActing:
+		vc, dvc = under*(at.Y2-x.Bottom2), under*at.V2
 	case Beta:
 		vc, dvc = under*(at.Y1-at.Y2-x.MinGap), under*(at.V1-at.V2)
 	default:

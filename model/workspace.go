@@ -8,7 +8,7 @@ import (
 )
 
 // Version names the state of the physics: it changes whenever a result may change.
-const Version = "5"
+const Version = "6"
 
 // Grid is the resolution of the cycle solver.
 type Grid struct {
@@ -39,8 +39,7 @@ type Workspace struct {
 	friction friction
 	source   source
 
-	// Histories over the full steps of a cycle, for the closed-form losses.
-	upper, lower, buffer [cycle.MaxSteps]float64
+	loads loads
 }
 
 // NewWorkspace makes a workspace on the production grid.
@@ -48,7 +47,7 @@ func NewWorkspace() *Workspace { return NewWorkspaceGrid(ProductionGrid()) }
 
 // NewWorkspaceGrid makes a workspace on a grid of the caller's.
 func NewWorkspaceGrid(g Grid) *Workspace {
-	if g.Heater < 1 || g.Regenerator < 2 || g.Cooler < 1 || g.Steps < 8 || g.Steps > cycle.MaxSteps || g.CoarseSteps > cycle.MaxSteps ||
+	if g.Heater < 1 || g.Regenerator < 2 || g.Cooler < 1 || g.Steps < 8 || g.Steps > cycle.MaxSteps-mostCylinders || g.CoarseSteps > cycle.MaxSteps ||
 		g.Heater+g.Regenerator+g.Cooler+6 > cycle.MaxCells {
 		panic("model: grid out of range")
 	}

@@ -44,6 +44,12 @@ func (q Quantity) dimension() dimension {
 		return dimension{2, 1, -3, -1}
 	case SpecificEnergy:
 		return dimension{2, 0, -2, 0}
+	case Force:
+		return dimension{1, 1, -2, 0}
+	case Inertia:
+		return dimension{2, 1, 0, 0}
+	case Unbalance:
+		return dimension{1, 1, 0, 0}
 	case SpecificHeat:
 		return dimension{2, 0, -2, -1}
 	}

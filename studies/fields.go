@@ -175,11 +175,19 @@ func parseRange(text string, q Quantity) Range {
 // conditions
 
 func whenDisplacer() Condition {
-	return Condition{"to beta and gamma machines", func(e *model.Engine) bool { return e.Layout != model.Alpha }}
+	return Condition{"to beta and gamma machines", func(e *model.Engine) bool { return e.Layout.HasDisplacer() }}
 }
 
 func whenAlpha() Condition {
 	return Condition{"to alpha machines", func(e *model.Engine) bool { return e.Layout == model.Alpha }}
+}
+
+func whenDoubleActing() Condition {
+	return Condition{"to double-acting machines", func(e *model.Engine) bool { return e.Layout == model.DoubleActing }}
+}
+
+func whenPiston() Condition {
+	return Condition{"to beta, gamma and double-acting machines", func(e *model.Engine) bool { return e.Layout != model.Alpha }}
 }
 
 func whenBeta() Condition {

@@ -11,7 +11,7 @@ import (
 // usual ranges: typical figures of small heat-and-power, solar and low-temperature machines taken
 // together, from memory. Hard ranges only keep out what cannot be meant.
 
-func layoutNames() []string { return []string{"alpha", "beta", "gamma"} }
+func layoutNames() []string { return []string{"alpha", "beta", "gamma", "double-acting"} }
 
 func matrixNames() []string { return []string{"woven-screen", "random-fibre"} }
 
@@ -36,7 +36,9 @@ func alloyNames() []string {
 }
 
 func whenPhase() Condition {
-	return Condition{"to sinusoidal and slider-crank drives", func(e *model.Engine) bool { return e.Drive.Kind != drive.Rhombic }}
+	return Condition{"to sinusoidal and slider-crank drives of alpha, beta and gamma machines", func(e *model.Engine) bool {
+		return e.Drive.Kind != drive.Rhombic && e.Layout != model.DoubleActing
+	}}
 }
 
 func whenRod() Condition {
@@ -49,7 +51,20 @@ func whenRhombic() Condition {
 
 func whenDisplacerStroke() Condition {
 	return Condition{"to beta and gamma machines without a rhombic drive, whose strokes follow from the drive",
+		func(e *model.Engine) bool { return e.Layout.HasDisplacer() && e.Drive.Kind != drive.Rhombic }}
+}
+
+func whenPistonStroke() Condition {
+	return Condition{"to beta, gamma and double-acting machines without a rhombic drive, whose strokes follow from the drive",
 		func(e *model.Engine) bool { return e.Layout != model.Alpha && e.Drive.Kind != drive.Rhombic }}
+}
+
+func whenTwoAxes() Condition {
+	return Condition{"to alpha and gamma machines", func(e *model.Engine) bool { return e.Layout == model.Alpha || e.Layout == model.Gamma }}
+}
+
+func whenBuffer() Condition {
+	return Condition{"to alpha, beta and gamma machines", func(e *model.Engine) bool { return e.Layout != model.DoubleActing }}
 }
 
 // machineFields are layout, gas, drive, pistons and spaces.
@@ -62,6 +77,8 @@ func machineFields() []Field {
 	rows := []Field{
 		choice("layout", "arrangement of pistons and cylinders", layoutNames(),
 			func(e *model.Engine) *model.Layout { return &e.Layout }, fixed),
+		whole("cylinders", "cylinders in the ring; heater, regenerator, cooler, ducts and clearances are those of one of as many circuits", "3 to 12", "3 to 6",
+			func(e *model.Engine) *int { return &e.Cylinders }, when(whenDoubleActing()), defaults("4")),
 		choice("gas", "working gas", gasNames(), func(e *model.Engine) *gas.Kind { return &e.Gas }),
 		measured("charge_pressure", "time mean of the working pressure over a cycle", Pressure, "bar", "0.1 bar to 500 bar", "1 bar to 250 bar",
 			func(e *model.Engine) *float64 { return &e.ChargePressure }),
@@ -77,13 +94,25 @@ func machineFields() []Field {
 			func(e *model.Engine) *float64 { return &e.Drive.CrankRadius }, when(whenRhombic())),
 		measured("drive.eccentricity", "distance of the crank axes from the cylinder axis", Length, "mm", "0.1 mm to 2 m", "5 mm to 300 mm",
 			func(e *model.Engine) *float64 { return &e.Drive.Eccentricity }, when(whenRhombic())),
+		measured("drive.cylinder_angle", "from the axis of the first cylinder to that of the second, in the sense of rotation; at the phase angle both pistons share a crank pin", Angle, "deg", "0 deg to 180 deg", "",
+			func(e *model.Engine) *float64 { return &e.Drive.CylinderAngle }, when(whenTwoAxes()), defaults("0 deg")),
+		measured("drive.cylinder_distance", "of both cylinder axes along the shaft", Length, "mm", "0 mm to 5 m", "",
+			func(e *model.Engine) *float64 { return &e.Drive.CylinderDistance }, when(whenTwoAxes()), defaults("0 mm")),
+		measured("drive.cylinder_circle", "diameter of the circle on which the cylinder axes stand; 0 leaves the shaking couple out", Length, "mm", "0 mm to 10 m", "",
+			func(e *model.Engine) *float64 { return &e.Drive.CylinderCircle }, when(whenDoubleActing()), defaults("0 mm")),
+		measured("drive.speed_fluctuation", "largest less smallest speed over the mean, to be held by the flywheel", Number, "%", "0.0001 to 0.5", "0.2 % to 10 %",
+			func(e *model.Engine) *float64 { return &e.Drive.SpeedFluctuation }, defaults("2 %")),
 	}
 	rows = append(rows, moving("displacer", "displacer", displacer, whenDisplacer(), whenDisplacerStroke())...)
 	rows = append(rows,
 		measured("displacer.rod", "diameter of the displacer rod through the compression space, 0 for none", Length, "mm", "0 mm to 500 mm", "0 mm to 60 mm",
 			func(e *model.Engine) *float64 { return &e.Displacer.Rod }, when(whenDisplacer()), defaults("0 mm")))
 	rows = append(rows, hotBody("displacer", "displacer", displacer, whenDisplacer())...)
-	rows = append(rows, moving("piston", "piston", piston, whenDisplacer(), whenDisplacerStroke())...)
+	rows = append(rows, moving("piston", "piston", piston, whenPiston(), whenPistonStroke())...)
+	rows = append(rows,
+		measured("piston.rod", "diameter of the piston rod through the compression space", Length, "mm", "0 mm to 500 mm", "5 mm to 60 mm",
+			func(e *model.Engine) *float64 { return &e.Piston.Rod }, when(whenDoubleActing())))
+	rows = append(rows, hotBody("piston", "dome of the double-acting piston", piston, whenDoubleActing())...)
 	rows = append(rows, moving("expansion_piston", "expansion piston", expansion, whenAlpha(), whenAlpha())...)
 	rows = append(rows, hotBody("expansion_piston", "dome of the expansion piston", expansion, whenAlpha())...)
 	rows = append(rows, moving("compression_piston", "compression piston", compression, whenAlpha(), whenAlpha())...)
@@ -93,7 +122,7 @@ func machineFields() []Field {
 		measured("compression_space.clearance", "compression space at its smallest", Volume, "cm3", "0 cm3 to 100 l", "0.2 cm3 to 5 l",
 			func(e *model.Engine) *float64 { return &e.CompressionClearance }),
 		measured("buffer_space.volume", "mean volume behind the piston, 0 for a large one of constant pressure", Volume, "l", "0 l to 10 m3", "",
-			func(e *model.Engine) *float64 { return &e.BufferVolume }, defaults("0 l")))
+			func(e *model.Engine) *float64 { return &e.BufferVolume }, when(whenBuffer()), defaults("0 l")))
 	for i := range rows {
 		if rows[i].Path == "piston.bore" {
 			tiedTo("displacer.bore", whenBeta())(&rows[i])
@@ -113,6 +142,8 @@ func moving(prefix, name string, at func(*model.Engine) *model.Reciprocator, c, 
 			func(e *model.Engine) *float64 { return &at(e).SealGap }, when(c), defaults("0.01 mm")),
 		measured(prefix+".seal_length", "length of that seal", Length, "mm", "0.5 mm to 1 m", "3 mm to 150 mm",
 			func(e *model.Engine) *float64 { return &at(e).SealLength }, when(c), defaults("15 mm")),
+		measured(prefix+".mass", "moving mass of the "+name+" with its rod and a share of the connecting rod, 0 for not given: then its inertia is left out", Mass, "kg", "0 kg to 10000 kg", "",
+			func(e *model.Engine) *float64 { return &at(e).Mass }, when(c), defaults("0 kg")),
 	}
 }
 

@@ -32,7 +32,6 @@ const (
 	ChoiceUnknown    Code = "choice-unknown"    // not one of the choices
 	DoesNotApply     Code = "does-not-apply"    // means nothing with this layout, drive or heat
 	Contradiction    Code = "contradiction"     // two values that say the same thing twice or differently
-	NotAvailable     Code = "not-available"     // not in this version
 	FreeNotPossible  Code = "free-not-possible" // this one cannot be freed
 	FreeShape        Code = "free-shape"        // neither a range nor a list, or the wrong one of them
 	FreeInverted     Code = "free-inverted"     // from is not below to
@@ -63,7 +62,7 @@ const (
 func Codes() []Code {
 	return []Code{FileEmpty, FileTooBig, FileTooDeep, FileNotText, FileNotYAML, SeveralDocuments, YAMLFeature,
 		KeyTwice, KeyUnknown, KeyMissing, ShapeWrong, TextExpected, NumberExpected, NumberFormat, WholeExpected,
-		UnitUnknown, UnitWrong, OutOfRange, ChoiceUnknown, DoesNotApply, Contradiction, NotAvailable,
+		UnitUnknown, UnitWrong, OutOfRange, ChoiceUnknown, DoesNotApply, Contradiction,
 		FreeNotPossible, FreeShape, FreeInverted, FreeList, StartOutside, LimitUnknown, LimitNoBound, LimitInverted,
 		AimsCount, AimUnknown, AimDirection, ExprSyntax, ExprUnknown, ExprDimension, BudgetInvalid, SeedInvalid,
 		Corrections, SetInvalid,

@@ -4,6 +4,7 @@ import (
 	"slices"
 
 	"hotfront/model"
+	"hotfront/model/drive"
 )
 
 // Output is one result of the model: one float64 field of model.Performance or model.Losses.
@@ -49,7 +50,7 @@ func Outputs() []Output {
 	type p = model.Performance
 	return slices.Concat([]Output{
 		outcome("brake_power", "power at the shaft", Power, "kW", func(p *p) *float64 { return &p.BrakePower }),
-		outcome("indicated_power", "p-V power after flow friction, cycle-work factor and leakage", Power, "kW", func(p *p) *float64 { return &p.IndicatedPower }),
+		outcome("indicated_power", "p-V power after flow friction, cycle-work factor, leakage and gas spring", Power, "kW", func(p *p) *float64 { return &p.IndicatedPower }),
 		outcome("pv_power", "p-V power of both spaces at uniform pressure, before flow friction", Power, "kW", func(p *p) *float64 { return &p.PVPower }),
 		outcome("flow_loss", "power lost to flow friction", Power, "kW", func(p *p) *float64 { return &p.FlowLoss }),
 		outcome("heat_in", "heat into the engine at the hot end", Power, "kW", func(p *p) *float64 { return &p.HeatIn }),
@@ -110,11 +111,49 @@ func Outputs() []Output {
 		outcome("cooler.reynolds", "cycle-mean Reynolds number in the cooler tubes", Number, "-", func(p *p) *float64 { return &p.CoolerReynolds }),
 		outcome("cooler.flow_loss", "power lost to flow friction in the cooler", Power, "W", func(p *p) *float64 { return &p.CoolerFlowLoss }),
 		outcome("coolant.outlet", "coolant temperature at its exit", Temperature, "degC", func(p *p) *float64 { return &p.CoolantOutlet }),
-	}, sourceOutputs(), lossOutputs())
+	}, driveOutputs(), sourceOutputs(), lossOutputs())
 }
 
 func outcome(name, text string, q Quantity, unitName string, at func(*model.Performance) *float64) Output {
 	return Output{Name: name, Text: text, Quantity: q, Unit: unitName, at: at}
+}
+
+// driveOutputs are the loads of the drive.
+func driveOutputs() []Output {
+	type p = model.Performance
+	rows := []Output{
+		outcome("drive.torque_max", "largest torque at the shaft over a turn, with the inertia of the masses given", Torque, "N m", func(p *p) *float64 { return &p.Drive.TorqueMax }),
+		outcome("drive.torque_min", "smallest torque at the shaft over a turn", Torque, "N m", func(p *p) *float64 { return &p.Drive.TorqueMin }),
+		outcome("drive.fluctuation_energy", "that the flywheel takes up and gives back in a turn", Energy, "J", func(p *p) *float64 { return &p.Drive.FluctuationEnergy }),
+		outcome("drive.flywheel", "moment of inertia, all that turns together, that holds drive.speed_fluctuation", Inertia, "kg m2", func(p *p) *float64 { return &p.Drive.Flywheel }),
+		outcome("drive.piston_force", "largest axial force that a piston or displacer hands on, with inertia", Force, "kN", func(p *p) *float64 { return &p.Drive.PistonForce }),
+		outcome("drive.rod_force", "largest force along a connecting rod", Force, "kN", func(p *p) *float64 { return &p.Drive.RodForce }),
+		outcome("drive.side_thrust", "largest force of a piston on its cylinder", Force, "kN", func(p *p) *float64 { return &p.Drive.SideThrust }),
+		outcome("drive.pin_load", "largest load of the bearing of a crank pin", Force, "kN", func(p *p) *float64 { return &p.Drive.PinLoad }),
+		outcome("drive.shaking_force", "largest inertia force on the frame without counterweights", Force, "kN", func(p *p) *float64 { return &p.Drive.ShakingForce }),
+		outcome("drive.shaking_couple", "largest couple of the inertia forces on the frame without counterweights", Torque, "N m", func(p *p) *float64 { return &p.Drive.ShakingCouple }),
+		outcome("drive.counterweight", "best single counterweight on the shaft, on each crank of a rhombic drive: mass times radius", Unbalance, "kg m", func(p *p) *float64 { return &p.Drive.Counterweight }),
+		outcome("drive.residual_force", "largest inertia force on the frame with it", Force, "kN", func(p *p) *float64 { return &p.Drive.ResidualForce }),
+	}
+	for i := range rows {
+		switch rows[i].Name {
+		case "drive.rod_force", "drive.side_thrust":
+			rows[i].When = Condition{"to drives with connecting rods", func(e *model.Engine) bool { return e.Drive.Kind != drive.Sinusoidal }}
+		case "drive.shaking_force", "drive.shaking_couple", "drive.counterweight", "drive.residual_force":
+			rows[i].When = Condition{"to machines whose moving masses are all given", massesGiven}
+		}
+	}
+	return rows
+}
+
+func massesGiven(e *model.Engine) bool {
+	switch e.Layout {
+	case model.Alpha:
+		return e.ExpansionPiston.Mass > 0 && e.CompressionPiston.Mass > 0
+	case model.DoubleActing:
+		return e.Piston.Mass > 0
+	}
+	return e.Displacer.Mass > 0 && e.Piston.Mass > 0
 }
 
 // sourceOutputs are the results of burner and receiver.
@@ -166,6 +205,7 @@ func lossOutputs() []Output {
 		outcome("flow_friction", "flow friction in all parts; heat to the gas where it is made", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.FlowFriction }),
 		outcome("cycle_work", "p-V work lost to what one dimension leaves out; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.CycleWork }),
 		outcome("leakage", "past the piston seal; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.Leakage }),
+		outcome("gas_spring", "in a closed buffer space, by heat to its walls; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.GasSpring }),
 		outcome("drive", "in the drive; to the surroundings", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.Drive }),
 		outcome("seal_friction", "seals and bearings; to the surroundings", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.SealFriction }),
 		outcome("reheat", "carried through the regenerator by gas that lags behind its metal; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.Reheat }),

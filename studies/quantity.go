@@ -32,6 +32,9 @@ const (
 	Conductance
 	SpecificEnergy
 	SpecificHeat
+	Force
+	Inertia
+	Unbalance
 	quantities // their number
 )
 
@@ -39,7 +42,7 @@ const (
 func (q Quantity) String() string {
 	return [quantities]string{"plain number", "length", "area", "volume", "pressure", "temperature",
 		"temperature difference", "speed of rotation", "angle", "power", "torque", "energy", "time", "mass", "mass flow",
-		"heat flux", "film coefficient", "velocity", "heat conductance", "energy by mass", "heat capacity by mass"}[q]
+		"heat flux", "film coefficient", "velocity", "heat conductance", "energy by mass", "heat capacity by mass", "force", "moment of inertia", "unbalance"}[q]
 }
 
 // unit is one unit of a quantity: SI value = number x mul / div + offset. Two factors, because
@@ -105,6 +108,10 @@ func units() []unit {
 		{"J/kg", SpecificEnergy, 1, 1, 0},
 		{"MJ/kg", SpecificEnergy, 1e6, 1, 0},
 		{"J/(kg K)", SpecificHeat, 1, 1, 0},
+		{"N", Force, 1, 1, 0},
+		{"kN", Force, 1e3, 1, 0},
+		{"kg m2", Inertia, 1, 1, 0},
+		{"kg m", Unbalance, 1, 1, 0},
 	}
 }
 

@@ -44,11 +44,6 @@ func (f *Field) parse(text string) (float64, *fault) {
 }
 
 func (f *Field) unknownChoice(text string) *fault {
-	switch {
-	case f.Path == "layout" && text == "double-acting",
-		f.Path == "drive.kind" && (text == "ross-yoke" || text == "ross"):
-		return &fault{NotAvailable, clip(text) + " is not in this version", oneOf("", f.Choices)}
-	}
 	return &fault{ChoiceUnknown, fmt.Sprintf("%q is not one of its values", clip(text)), oneOf(text, f.Choices)}
 }
 

@@ -106,7 +106,7 @@ func TestEvaluateFormats(t *testing.T) {
 	// The units of CSV against SI, by their definition.
 	factor := map[string]float64{"": 1, "kW": 1e3, "W": 1, "%": 0.01, "bar": 1e5, "mm": 1e-3, "cm3": 1e-6, "MPa": 1e6, "W/cm2": 1e4, "g": 1e-3,
 		"kg": 1, "rpm": 1.0 / 60, "J": 1, "N m": 1, "m/s": 1, "K": 1, "kg/s": 1, "h": 3600, "deg": math.Pi / 180, "l": 1e-3, "mm2": 1e-6, "m": 1,
-		"W/(m2 K)": 1}
+		"W/(m2 K)": 1, "kN": 1e3, "kg m2": 1, "kg m": 1}
 	_, rows := table(t, must(t, "evaluate", sawmill, "--format", "csv"))
 	checked := 0
 	for _, r := range rows {

@@ -244,3 +244,24 @@ func TestZeroAtZeroCause(t *testing.T) {
 	}
 	near(t, "friction", FrictionPower(0.5e5, 1.2e-4, 25), 150, 1e-14)
 }
+
+// TestGapReturn marches the gas along the gap in small steps: an independent solution of the same balance.
+func TestGapReturn(t *testing.T) {
+	const D, g, L, k = 0.07, 4e-4, 0.1, 0.28
+	for _, C := range []float64{0.01, 1, 10, 300, 1e5} {
+		n := 7.54 * k / (2 * g) * 2 * math.Pi * D * L / C
+		const steps = 200000
+		gas := 1.0 // hot end 1, cold end 0
+		for i := range steps {
+			wall := 1 - (float64(i)+0.5)/steps
+			// Midpoint rule in the gas as well.
+			gas = (gas*(1-0.5*n/steps) + n/steps*wall) / (1 + 0.5*n/steps)
+		}
+		if got := GapReturn(C, D, g, L, k); math.Abs(got-gas) > 1e-6*(1+got) {
+			t.Errorf("C = %g W/K: share %.8f, marched %.8f", C, got, gas)
+		}
+	}
+	if GapReturn(0, D, g, L, k) != 1 || GapReturn(3, D, 0, L, k) != 1 {
+		t.Error("no leak or no gap returns heat")
+	}
+}
