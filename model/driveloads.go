@@ -66,6 +66,7 @@ func (w *Workspace) setDriveLoads(dst *DriveResult, e *Engine) {
 		m.Counterweight = force.RhombicCounterweight(&m, e.Drive.CrankRadius)
 		dst.Counterweight = m.Counterweight
 		dst.ResidualForce = force.RhombicResidual(nil, motion, theta, &m, omega).Load
+		clean(&dst.ResidualForce, dst.ShakingForce)
 	case e.Layout == DoubleActing:
 		for _, at := range theta {
 			f, couple := force.RingShaking(&w.motion.mechanism, at, m1, 0.5*e.Drive.CylinderCircle, e.Cylinders, omega)
@@ -73,6 +74,8 @@ func (w *Workspace) setDriveLoads(dst *DriveResult, e *Engine) {
 			dst.ShakingCouple = max(dst.ShakingCouple, couple.Size())
 		}
 		dst.ResidualForce = dst.ShakingForce // a plate's counterweights act on the couple alone
+		clean(&dst.ResidualForce, float64(e.Cylinders)*dst.PistonForce)
+		clean(&dst.ShakingForce, float64(e.Cylinders)*dst.PistonForce)
 	default:
 		bodies := [2]force.Body{{Mass: m1}, {Mass: m2, Axis: w.included(e), Offset: e.Drive.CylinderDistance}}
 		free, couple := force.Residual(l.shaking[:n], nil, motion, theta, &bodies, nil, omega)
@@ -82,6 +85,14 @@ func (w *Workspace) setDriveLoads(dst *DriveResult, e *Engine) {
 		dst.Counterweight = rotor[0].Unbalance
 		left, _ := force.Residual(nil, nil, motion, theta, &bodies, rotor[:], omega)
 		dst.ResidualForce = left.Load
+		clean(&dst.ResidualForce, dst.ShakingForce)
+	}
+}
+
+// clean makes a sum of terms of the given size 0 where it is nothing but their rounding.
+func clean(sum *float64, size float64) {
+	if *sum < 1e-12*size {
+		*sum = 0
 	}
 }
 

@@ -137,10 +137,18 @@ func driveOutputs() []Output {
 	}
 	for i := range rows {
 		switch rows[i].Name {
-		case "drive.rod_force", "drive.side_thrust":
+		case "drive.side_thrust":
+			rows[i].When = Condition{"to slider-crank drives", func(e *model.Engine) bool { return e.Drive.Kind == drive.SliderCrank }}
+		case "drive.rod_force":
 			rows[i].When = Condition{"to drives with connecting rods", func(e *model.Engine) bool { return e.Drive.Kind != drive.Sinusoidal }}
-		case "drive.shaking_force", "drive.shaking_couple", "drive.counterweight", "drive.residual_force":
+		case "drive.shaking_force":
 			rows[i].When = Condition{"to machines whose moving masses are all given", massesGiven}
+		case "drive.shaking_couple":
+			rows[i].When = Condition{"to alpha, gamma and double-acting machines whose moving masses are all given",
+				func(e *model.Engine) bool { return e.Layout != model.Beta && massesGiven(e) }}
+		case "drive.counterweight", "drive.residual_force":
+			rows[i].When = Condition{"to alpha, beta and gamma machines whose moving masses are all given",
+				func(e *model.Engine) bool { return e.Layout != model.DoubleActing && massesGiven(e) }}
 		}
 	}
 	return rows
@@ -215,7 +223,7 @@ func lossOutputs() []Output {
 		outcome("displacer_conduction", "along the hot body; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.DisplacerConduction }),
 		outcome("shuttle", "carried by the moving hot body; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.Shuttle }),
 		outcome("appendix_gap", "carried by gas in the gap round the hot body; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.AppendixGap }),
-		outcome("displacer_leakage", "past the displacer seal; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.DisplacerLeakage }),
+		outcome("displacer_leakage", "past the seal of displacer or double-acting piston; to the coolant", Power, "W", func(p *model.Performance) *float64 { return &p.Losses.DisplacerLeakage }),
 	}
 	for i := range rows {
 		rows[i].Name = LossPrefix + rows[i].Name
