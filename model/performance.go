@@ -42,6 +42,8 @@ type Performance struct {
 	HeaterStressUtilisation           float64 // hoop stress over allowable stress [-]
 	HeaterThermalStress               float64 // at the bore, by the mean temperature drop across the wall at the flux peak; not in the utilisation [Pa]
 	HeaterLife                        float64 // creep rupture life at hoop stress x stress factor and metal temperature; 1e9 h stands for more [s]
+	HeaterLifeLow                     float64 // and its lower end by the scatter of creep data, from heat to heat and about the fit, one standard deviation [s]
+	HeaterLifeHigh                    float64 // upper end [s]
 	HeaterWallNeeded                  float64 // wall thickness at which the hoop stress is the allowable stress; 1 m stands for none [m]
 	CylinderStressUtilisation         float64 // hoop stress over allowable stress at the hot end of the cylinder wall [-]
 	CylinderWallNeeded                float64 // as for the heater [m]

@@ -44,10 +44,12 @@ func (w *Workspace) setMetal(dst *Performance, e *Engine) {
 	dst.HeaterAllowableStress = tubes.allowable
 	dst.HeaterStressUtilisation = tubes.utilisation
 	dst.HeaterWallNeeded = tubes.needed
-	dst.HeaterLife = longestLife
+	dst.HeaterLife, dst.HeaterLifeLow, dst.HeaterLifeHigh = longestLife, longestLife, longestLife
 	if tubes.stress > 0 {
-		life, _ := alloy.RuptureLife(dst.HeaterMetalTemperature, tubes.stress*h.StressFactor)
-		dst.HeaterLife = min(life, longestLife)
+		stress := tubes.stress * h.StressFactor
+		life, _ := alloy.RuptureLife(dst.HeaterMetalTemperature, stress)
+		low, high := alloy.LifeBand(dst.HeaterMetalTemperature, stress)
+		dst.HeaterLife, dst.HeaterLifeLow, dst.HeaterLifeHigh = min(life, longestLife), min(low, longestLife), min(high, longestLife)
 	}
 	mean := 0.5 * (dst.HeaterOuterTemperature + dst.HeaterInnerTemperature)
 	across := h.FluxPeaking * (dst.HeaterOuterTemperature - dst.HeaterInnerTemperature)

@@ -86,6 +86,8 @@ type Rupture struct {
 	Low  float64    // smallest parameter among the rows of the fit [kK]
 	High float64    // largest parameter among the rows of the fit [kK]
 	Rows int        // rows in the fit
+
+	Scatter float64 // of the rows about the fit, standard deviation on stress [-]
 }
 
 // Strength is a short-time strength at 20, 300, 500, 650, 800 and 950 degC [Pa].

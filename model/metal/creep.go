@@ -48,6 +48,21 @@ func (p *Properties) RuptureLife(T, stress float64) (seconds float64, inRange bo
 	return math.Pow(10, P*1e3/T-larsonMillerConstant) * secondsPerHour, inRange
 }
 
+// heatScatter is the scatter of rupture stress from heat to heat of one alloy, a standard deviation [-]: common
+// practice, no source.
+const heatScatter = 0.2
+
+// LifeBand gives the lives [s] between which about two of three heats break at T [K] under a stress [Pa] > 0: those at the
+// stress moved up and down by the scatter of the rows about the fit and that from heat to heat,
+//
+//	s = (heat^2 + rows^2)^1/2,   low = life(stress (1 + s)),   high = life(stress/(1 + s)).
+func (p *Properties) LifeBand(T, stress float64) (low, high float64) {
+	s := 1 + math.Hypot(heatScatter, p.Rupture.Scatter)
+	low, _ = p.RuptureLife(T, stress*s)
+	high, _ = p.RuptureLife(T, stress/s)
+	return low, high
+}
+
 // parameterAt solves log10Stress(P) = want. The curve falls everywhere, so outside the rows its
 // tangents give the answer directly and inside halving is sure.
 func (r *Rupture) parameterAt(want float64) float64 {

@@ -238,3 +238,52 @@ func TestCreepAllocations(t *testing.T) {
 		t.Errorf("allocations: %g", n)
 	}
 }
+
+// TestRuptureScatter recomputes the scatter of the rows about each fit: root mean square of ln(row/fit) on stress, with as
+// many degrees of freedom as rows beyond the coefficients of the fit.
+func TestRuptureScatter(t *testing.T) {
+	var sum [alloyCount]float64
+	var n [alloyCount]float64
+	for _, r := range ruptureRows(t) {
+		a, ok := fitOf(r)
+		if leftOut(r) != "" || !ok {
+			continue
+		}
+		p := Of(a)
+		got, _ := p.RuptureStress(r.T, r.life)
+		d := math.Log(r.stress / got)
+		sum[a] += d * d
+		n[a]++
+	}
+	for _, a := range Alloys() {
+		p := Of(a)
+		fitted := 0.0
+		for _, c := range p.Rupture.C {
+			if c != 0 {
+				fitted++
+			}
+		}
+		want := math.Sqrt(sum[a] / max(n[a]-fitted, 1))
+		if math.Abs(p.Rupture.Scatter-want) > 5e-4 {
+			t.Errorf("%v: scatter %.4f, of the rows %.4f", a, p.Rupture.Scatter, want)
+		}
+	}
+}
+
+// TestLifeBand: the band is that of the life at a stress moved by the scatter, and holds the life; with a steep curve it is wide.
+func TestLifeBand(t *testing.T) {
+	for _, a := range Alloys() {
+		p := Of(a)
+		T, stress := 973.0, 40e6
+		life, _ := p.RuptureLife(T, stress)
+		low, high := p.LifeBand(T, stress)
+		if !(low < life && life < high) {
+			t.Errorf("%v: %g s in %g to %g", a, life, low, high)
+		}
+		s := 1 + math.Hypot(heatScatter, p.Rupture.Scatter)
+		if back, _ := p.RuptureStress(T, low); math.Abs(back/(stress*s)-1) > 1e-9 {
+			t.Errorf("%v: stress for the low life %g, want %g", a, back, stress*s)
+		}
+		t.Logf("%v: rows %.1f %%, life at 40 MPa and 700 degC %.0f h, %.0f to %.0f h", a, 100*p.Rupture.Scatter, life/3600, low/3600, high/3600)
+	}
+}
