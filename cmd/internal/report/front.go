@@ -223,6 +223,7 @@ func (f *Front) Report(w io.Writer, picked []int, style Style, version string) e
 		fmt.Fprintf(w, "Hypervolume over the run: %s designs.\n", growth)
 	}
 	f.Press(w)
+	f.Beale(w)
 	_, err := fmt.Fprintf(w, "%s Model version %s.\n%s\n", correctionsText(s), version, Caution)
 	return err
 }
