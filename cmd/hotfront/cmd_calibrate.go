@@ -7,11 +7,13 @@ import (
 	"os"
 	"regexp"
 	"slices"
+	"strings"
 	"time"
 
 	"github.com/spf13/cobra"
 
 	"hotfront/cmd/internal/report"
+	"hotfront/studies"
 	"hotfront/studies/calibration"
 )
 
@@ -56,6 +58,9 @@ uncertainty, and warns of what the rows leave open. --out writes a file that 'co
 func (p *program) calibrate(file string, o *calibrateOptions) error {
 	if o.tests == "" {
 		return failed(exitUsage, "calibrate needs --tests FILE.csv")
+	}
+	if err := knownFactors(o.fit); err != nil {
+		return err
 	}
 	s, data, err := p.load(file)
 	if err != nil {
@@ -104,6 +109,20 @@ func (p *program) calibrate(file string, o *calibrateOptions) error {
 	}
 	fmt.Fprintf(p.err, "wrote %s\n", o.out)
 	return f.Close()
+}
+
+// knownFactors refuses a factor that there is not.
+func knownFactors(names []string) error {
+	var known []string
+	for _, f := range studies.Factors() {
+		known = append(known, f.Name)
+	}
+	for _, name := range names {
+		if !slices.Contains(known, name) {
+			return failed(exitUsage, fmt.Sprintf("--fit: no factor is called %q: %s", name, strings.Join(known, ", ")))
+		}
+	}
+	return nil
 }
 
 // checkOut refuses a name or a file for the corrections before any work is done for them.

@@ -57,7 +57,9 @@ func (p *program) newStudy(name string, o *newOptions) error {
 			if s == nil {
 				return issues
 			}
-			fmt.Fprintf(p.out, "%-24s  %s\n", e.Name, s.About)
+			if _, err := fmt.Fprintf(p.out, "%-26s  %s\n", e.Name, s.About); err != nil {
+				return err
+			}
 		}
 		return nil
 	}

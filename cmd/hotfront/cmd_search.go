@@ -169,7 +169,7 @@ func (p *program) searchIn(ctx context.Context, run *archive.Archive, problem *s
 	case errors.Is(err, optimize.ErrLedgerMismatch):
 		return fmt.Errorf("%w; version %s of the program, which began this run, searched another way: give this search a folder of its own", err, run.Meta().Program)
 	default:
-		return err
+		return fmt.Errorf("%w; what is in %s so far is safe: once this is cured the same command goes on", err, o.dir)
 	}
 	seconds := time.Since(start).Seconds()
 	pr.log.Info("searched", "designs", r.Evaluations, "feasible", r.Feasible, "failed", r.Failed, "repeated", r.Duplicates,

@@ -33,7 +33,7 @@ func newProgress(w io.Writer, p *studies.Problem, budget int) *progress {
 	now := time.Now()
 	pr := &progress{w: w, problem: p, budget: budget, start: now, last: now}
 	if f, ok := w.(*os.File); ok {
-		pr.terminal = term.IsTerminal(int(f.Fd()))
+		pr.terminal = term.IsTerminal(int(f.Fd())) && os.Getenv("TERM") != "dumb"
 	}
 	pr.log = logger(w, pr.terminal)
 	return pr

@@ -67,13 +67,31 @@ distributed model of the cycle and its losses, and searches for the designs that
 		RunE:              func(c *cobra.Command, _ []string) error { return c.Help() },
 	}
 	root.SetFlagErrorFunc(func(c *cobra.Command, err error) error {
-		return failed(exitUsage, fmt.Sprintf("%v; see %s --help", err, c.CommandPath()))
+		return failed(exitUsage, fmt.Sprintf("%s; see %s --help", plainWords(err.Error()), c.CommandPath()))
 	})
 	root.PersistentFlags().StringVar(&p.cpuProfile, "cpuprofile", "", "write a processor profile to this file")
 	root.CompletionOptions.HiddenDefaultCmd = true
 	root.AddCommand(p.checkCommand(), p.evaluateCommand(), p.searchCommand(), p.frontCommand(), p.surveyCommand(),
 		p.calibrateCommand(), p.fieldsCommand(), p.newCommand(), p.versionCommand())
 	return root
+}
+
+// plainWords says in plain words what a flag's number is not.
+func plainWords(text string) string {
+	head, reason, ok := strings.Cut(text, ": strconv.")
+	if !ok {
+		return text
+	}
+	wanted := "a whole number is wanted"
+	switch {
+	case strings.HasSuffix(reason, "out of range"):
+		wanted = "the number is too large"
+	case strings.HasPrefix(reason, "ParseFloat"):
+		wanted = "a number is wanted"
+	case strings.HasPrefix(reason, "ParseUint"):
+		wanted = "a whole number from 0 on is wanted"
+	}
+	return head + ": " + wanted
 }
 
 const cautions = `Results are estimates for concept work, not a pressure-vessel calculation. Stirling engines hold hot hydrogen or

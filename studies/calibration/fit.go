@@ -117,7 +117,7 @@ func (o *Outcome) Warnings() []string {
 		}
 	}
 	if len(o.Rows) <= len(o.Names) {
-		list = append(list, fmt.Sprintf("%d rows for %d factors: nothing is left to show how good the fit is", len(o.Rows), len(o.Names)))
+		list = append(list, "no more rows than factors: nothing is left to show how good the fit is")
 	}
 	if r.Agreeing < (r.Ended+1)/2 {
 		list = append(list, fmt.Sprintf("only %d of %d starts agree: there may be a better fit", r.Agreeing, r.Ended))

@@ -75,7 +75,7 @@ func CalibrationJSON(o *calibration.Outcome) any {
 
 // testRows are the rows of an outcome as text.
 func testRows(o *calibration.Outcome) (head []string, rows [][]string) {
-	head = []string{"settings", "quantity", "measured", "uncertainty", "before", "fitted", "off by", "in uncertainties", "fit without it", "off by"}
+	head = []string{"settings", "quantity", "measured", "uncertainty", "before", "fitted", "off by", "in uncertainties", "fit without it", "that off by"}
 	off := func(v, measured float64) string {
 		if measured == 0 {
 			return "-"

@@ -135,7 +135,7 @@ func Limits(s *studies.Study, e *model.Engine, p *model.Performance) []LimitJSON
 func (d *Design) CSV(w io.Writer) error {
 	var rows [][]string
 	for _, v := range d.Study.Design(&d.Engine) {
-		rows = append(rows, []string{"design", v.Field.Path, v.Field.Format(v.SI), unit(v.Field.Unit)})
+		rows = append(rows, []string{"design", v.Field.Path, exact(v.Field, &d.Engine), unit(v.Field.Unit)})
 	}
 	if d.Performance.Cause != model.None {
 		rows = append(rows, []string{"cause", "", d.Performance.Cause.String(), ""})
@@ -148,7 +148,7 @@ func (d *Design) CSV(w io.Writer) error {
 		if short, ok := strings.CutPrefix(o.Name, studies.LossPrefix); ok {
 			part, name = "losses", short
 		}
-		rows = append(rows, []string{part, name, o.Format(o.Get(&d.Performance)), unit(o.Unit)})
+		rows = append(rows, []string{part, name, resultCSV(studies.FromSI(o.Get(&d.Performance), o.Quantity, o.Unit)), unit(o.Unit)})
 	}
 	for i, r := range d.Study.LimitResults(&d.Engine, &d.Performance) {
 		l := &d.Study.Limits[i]
@@ -377,10 +377,17 @@ func (d *Design) limits(w io.Writer, s Style) error {
 			met = "NOT MET"
 		}
 		margin := "-"
-		if r.Bound != 0 {
+		switch {
+		case l.Quantity == studies.Temperature: // a share of a reading means nothing
+			margin = fmt.Sprintf("%.0f K", r.Margin)
+		case r.Bound != 0:
 			margin = fmt.Sprintf("%.1f %%", 100*r.Margin/math.Abs(r.Bound))
 		}
 		table.Rows = append(table.Rows, []string{r.Name, l.Format(r.Value), l.BoundText(), margin, met, l.Expr})
 	}
-	return table.Write(w, s.Listing())
+	if err := table.Write(w, s.Listing()); err != nil {
+		return err
+	}
+	_, err := fmt.Fprintln(w)
+	return err
 }

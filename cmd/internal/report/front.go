@@ -213,8 +213,8 @@ func headed(name, unitName string) string {
 // Report writes the members picked for people, with what pressed the front.
 func (f *Front) Report(w io.Writer, picked []int, style Style, version string) error {
 	s := f.Problem.Study()
-	fmt.Fprintf(w, "%s: %d designs on the front of %d tried, seed %d; %d shown. Hypervolume %s.\n\n",
-		s.Name, len(f.Points), f.Evaluations, s.Seed, len(picked), HypervolumeText(f.Problem, f.Hypervolume))
+	fmt.Fprintf(w, "%s: %s on the front of %d tried, seed %d; %d shown. Hypervolume %s.\n\n",
+		s.Name, counted(len(f.Points), "design"), f.Evaluations, s.Seed, len(picked), HypervolumeText(f.Problem, f.Hypervolume))
 	if err := f.Table(w, picked, style); err != nil {
 		return err
 	}

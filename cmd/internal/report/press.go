@@ -60,7 +60,7 @@ func (f *Front) Press(w io.Writer) {
 
 func (f *Front) failures(w io.Writer) {
 	for _, c := range f.Failures {
-		fmt.Fprintf(w, "%d designs without a result: %s.\n", c.Count, c.Cause)
+		fmt.Fprintf(w, "%s without a result: %s.\n", counted(c.Count, "design"), c.Cause)
 	}
 }
 
@@ -68,12 +68,16 @@ func (f *Front) failures(w io.Writer) {
 // other, and what the nearest design misses.
 func (f *Front) Blame(w io.Writer) {
 	s := f.Problem.Study()
+	if f.Evaluations == 0 {
+		fmt.Fprintf(w, "The run holds no design yet: its search ended before the first batch, or is in it. The same search goes on.\n")
+		return
+	}
 	if f.Nearest == nil {
-		fmt.Fprintf(w, "None of %d designs has a result.\n", f.Evaluations)
+		fmt.Fprintf(w, "None of %s has a result.\n", counted(f.Evaluations, "design"))
 		f.failures(w)
 		return
 	}
-	fmt.Fprintf(w, "None of %d designs meets all limits.\n", f.Evaluations)
+	fmt.Fprintf(w, "None of %s meets all limits.\n", counted(f.Evaluations, "design"))
 	blamed := false
 	for i := range f.Reach {
 		if r := &f.Reach[i]; r.Met == 0 {
@@ -98,6 +102,14 @@ func (f *Front) Blame(w io.Writer) {
 		}
 	}
 	f.failures(w)
+}
+
+// counted writes a number of things.
+func counted(n int, thing string) string {
+	if n == 1 {
+		return "1 " + thing
+	}
+	return fmt.Sprintf("%d %ss", n, thing)
 }
 
 func valueText(l *studies.Limit, v float64) string {
