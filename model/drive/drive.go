@@ -28,6 +28,7 @@ const (
 	Sinusoidal  Kind = iota // both bodies move as a cosine of the crank angle
 	SliderCrank             // each body on a crank throw and connecting rod of its own, in line
 	Rhombic                 // two mirrored cranks and two yokes
+	RossYoke                // one crank, and a yoke that carries both pistons on parallel axes; no beta machine
 )
 
 // String gives the name used in study files.
@@ -39,6 +40,8 @@ func (k Kind) String() string {
 		return "slider-crank"
 	case Rhombic:
 		return "rhombic"
+	case RossYoke:
+		return "ross-yoke"
 	}
 	return "unknown"
 }
@@ -57,11 +60,15 @@ type Motion struct {
 type Mechanism struct {
 	Kind         Kind
 	Phase        float64 // angle by which the first body leads the second [rad]; sinusoidal, slider-crank
-	Rod          float64 // connecting rod [m]; slider-crank, rhombic
-	Radius       float64 // crank radius [m]; rhombic
+	Rod          float64 // connecting rod [m]; slider-crank, rhombic, Ross yoke (both rods)
+	Radius       float64 // crank radius [m]; rhombic, Ross yoke
 	Eccentricity float64 // distance of each crank's axis from the cylinder axis [m]; rhombic
 	Stroke1      float64 // stroke of the first body [m]; sinusoidal, slider-crank
 	Stroke2      float64 // stroke of the second body [m]; sinusoidal, slider-crank
+
+	YokeArm       float64 // distance of the tail pin from the crank pin [m]; Ross yoke
+	YokeHalfWidth float64 // distance of each rod's pin from the crank pin, and of each cylinder's axis from the crank's axis [m]; Ross yoke
+	LinkLength    float64 // link that guides the tail pin [m]; Ross yoke
 }
 
 // Fault says why a mechanism cannot work.
@@ -71,9 +78,10 @@ const (
 	None          Fault = iota // it works
 	UnknownKind                // the kind is none of those defined here
 	NotFinite                  // a dimension is NaN or infinite
-	NotPositive                // a stroke or crank radius is not above zero
+	NotPositive                // a stroke or a length is not above zero
 	RodTooShort                // the connecting rod cannot pass every crank angle
 	CranksCollide              // the two crank pins of a rhombic drive meet: eccentricity not above crank radius
+	YokeJams                   // yoke and link of a Ross yoke do not close at every crank angle
 )
 
 // String gives a short text for messages.
@@ -86,11 +94,13 @@ func (f Fault) String() string {
 	case NotFinite:
 		return "a dimension is not a finite number"
 	case NotPositive:
-		return "stroke or crank radius not above zero"
+		return "stroke, crank radius or another length not above zero"
 	case RodTooShort:
 		return "connecting rod too short to turn"
 	case CranksCollide:
 		return "crank pins meet: eccentricity not above crank radius"
+	case YokeJams:
+		return "yoke and link do not let the crank turn: crank radius too large for them"
 	}
 	return "unknown fault"
 }
@@ -104,6 +114,8 @@ func (m *Mechanism) Check() Fault {
 		return checkSliderCrank(m)
 	case Rhombic:
 		return checkRhombic(m)
+	case RossYoke:
+		return checkRossYoke(m)
 	}
 	return UnknownKind
 }
@@ -117,6 +129,8 @@ func (m *Mechanism) At(dst *Motion, theta float64) {
 		sliderCrank(dst, m, theta)
 	case Rhombic:
 		rhombic(dst, m, theta)
+	case RossYoke:
+		rossYoke(dst, m, theta)
 	default:
 		panic("drive: motion of an unknown kind of mechanism")
 	}
@@ -144,8 +158,8 @@ func (e *Extremes) Stroke1() float64 { return e.Top1 - e.Bottom1 }
 // Stroke2 is the stroke of the second body [m].
 func (e *Extremes) Stroke2() float64 { return e.Top2 - e.Bottom2 }
 
-// Extremes gives the ends of the motion: in closed form, except the gap of a slider-crank, which is
-// found by bracketing and Newton's method to rounding.
+// Extremes gives the ends of the motion: in closed form, except the gap of a slider-crank and all
+// of a Ross yoke, which are found by bracketing and Newton's method to rounding.
 func (m *Mechanism) Extremes() Extremes {
 	switch m.Kind {
 	case Sinusoidal:
@@ -154,6 +168,8 @@ func (m *Mechanism) Extremes() Extremes {
 		return extremesSliderCrank(m)
 	case Rhombic:
 		return extremesRhombic(m)
+	case RossYoke:
+		return extremesRossYoke(m)
 	}
 	panic("drive: extremes of an unknown kind of mechanism")
 }

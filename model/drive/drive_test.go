@@ -21,6 +21,9 @@ func mechanisms() []Mechanism {
 		{Kind: Rhombic, Rod: 0.046, Radius: 0.0138, Eccentricity: 0.0208},
 		{Kind: Rhombic, Rod: 0.09, Radius: 0.015, Eccentricity: 0.016},
 		{Kind: Rhombic, Rod: 0.06, Radius: 0.01, Eccentricity: 0.045},
+		{Kind: RossYoke, Radius: 0.008, Rod: 0.06, YokeArm: 0.03, YokeHalfWidth: 0.03, LinkLength: 0.05},
+		{Kind: RossYoke, Radius: 0.02, Rod: 0.05, YokeArm: 0.04, YokeHalfWidth: 0.06, LinkLength: 0.1},
+		{Kind: RossYoke, Radius: 0.004, Rod: 0.3, YokeArm: 0.09, YokeHalfWidth: 0.02, LinkLength: 0.007},
 	}
 }
 
@@ -84,7 +87,7 @@ func TestExtremes(t *testing.T) {
 		e := m.Extremes()
 		scale := max(e.Stroke1(), e.Stroke2())
 		size := scale
-		if m.Kind == Rhombic {
+		if m.Kind == Rhombic || m.Kind == RossYoke {
 			size = m.Rod
 		}
 		// 1. Each is the position at the angle stated, and the slope there is zero.
@@ -161,7 +164,7 @@ func TestUsualPhaseGivesWork(t *testing.T) {
 			}
 		}
 		for layout, w := range work {
-			if layout == "alpha" && m.Kind == Rhombic {
+			if layout == "alpha" && m.Kind == Rhombic || layout == "beta" && m.Kind == RossYoke {
 				continue // no such machine
 			}
 			if !(w > 0) {
@@ -199,13 +202,13 @@ func TestCheck(t *testing.T) {
 }
 
 func TestStrings(t *testing.T) {
-	for k, want := range map[Kind]string{Sinusoidal: "sinusoidal", SliderCrank: "slider-crank", Rhombic: "rhombic", 7: "unknown"} {
+	for k, want := range map[Kind]string{Sinusoidal: "sinusoidal", SliderCrank: "slider-crank", Rhombic: "rhombic", RossYoke: "ross-yoke", 7: "unknown"} {
 		if k.String() != want {
 			t.Errorf("kind %d: %q, want %q", k, k.String(), want)
 		}
 	}
 	seen := map[string]bool{}
-	for f := None; f <= CranksCollide; f++ {
+	for f := None; f <= YokeJams; f++ {
 		if seen[f.String()] || f.String() == "unknown fault" {
 			t.Errorf("fault %d has no text of its own: %q", f, f.String())
 		}

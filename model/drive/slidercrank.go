@@ -53,61 +53,21 @@ func extremesSliderCrank(m *Mechanism) Extremes {
 		Top2: r2, Top2At: math.Pi,
 		Bottom2: -r2, Bottom2At: 0,
 	}
-	e.MinGap, e.MinGapAt = smallestGap(m, 1)
-	e.MaxGap, e.MaxGapAt = smallestGap(m, -1)
-	e.MaxGap = -e.MaxGap
-	return e
-}
-
-// smallestGap finds the smallest value over a turn of sign*(Y1 - Y2) and its angle. The gap holds few
-// harmonics, so every low point shows on a grid of 5 degrees; each is refined, since two of them may be
-// nearly equal.
-func smallestGap(m *Mechanism, sign float64) (gap, at float64) {
+	// The gap holds few harmonics, so every low point shows on a grid of 5 degrees.
 	const n = 72
-	const step = 2 * math.Pi / n
 	var grid [n]float64
 	var mo Motion
 	for i := range grid {
-		m.At(&mo, float64(i)*step)
-		grid[i] = sign * (mo.Y1 - mo.Y2)
+		sliderCrank(&mo, m, float64(i)*(2*math.Pi/n))
+		grid[i] = mo.Y1 - mo.Y2
 	}
-	gap = math.Inf(1)
-	for i, g := range grid {
-		if g > grid[(i+n-1)%n] || g > grid[(i+1)%n] {
-			continue
-		}
-		if refined, theta := lowPoint(m, sign, float64(i)*step, step); refined < gap {
-			gap, at = refined, theta
-		}
+	gap := func(theta float64) (y, v, a float64) {
+		var mo Motion
+		sliderCrank(&mo, m, theta)
+		return mo.Y1 - mo.Y2, mo.V1 - mo.V2, mo.A1 - mo.A2
 	}
-	return gap, turn(at)
-}
-
-// lowPoint takes the slope of sign*(Y1 - Y2) to zero inside theta -+ step by Newton's method, kept inside
-// the bracket by bisection.
-func lowPoint(m *Mechanism, sign, theta, step float64) (gap, at float64) {
-	low, high := theta-step, theta+step
-	var mo Motion
-	for range 60 {
-		m.At(&mo, theta)
-		slope, curve := sign*(mo.V1-mo.V2), sign*(mo.A1-mo.A2)
-		if slope == 0 {
-			break
-		}
-		if slope < 0 {
-			low = theta
-		} else {
-			high = theta
-		}
-		next := theta - slope/curve
-		if !(next > low && next < high) { // also where the curvature is zero
-			next = 0.5 * (low + high)
-		}
-		if math.Abs(next-theta) < 1e-15*math.Pi {
-			break
-		}
-		theta = next
-	}
-	m.At(&mo, theta)
-	return sign * (mo.Y1 - mo.Y2), theta
+	e.MinGap, e.MinGapAt = lowest(grid[:], 1, gap)
+	e.MaxGap, e.MaxGapAt = lowest(grid[:], -1, gap)
+	e.MaxGap = -e.MaxGap
+	return e
 }
