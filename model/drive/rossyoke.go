@@ -2,10 +2,11 @@ package drive
 
 import "math"
 
-// margin is the part by which a linkage must stay away from its dead point: of the crank radius to the largest one
-// that yoke and link let pass, and of the rod's offset to its length. At a dead point forces grow without bound; this
-// near to it rounding decides, so such a drive is refused.
-const margin = 1e-9
+// margin is the part by which a Ross yoke must stay away from its dead points: the crank radius from the largest one
+// that yoke and link let pass, and a rod from the offset that it has to reach. At a dead point forces grow without
+// bound and the motion turns sharply; a drive as near to it as this, where the link comes within one to three degrees of
+// the line of the yoke's arm, is refused.
+const margin = 1e-4
 
 // rossYoke is the linkage of small two-cylinder machines in which one crank drives two pistons on parallel axes
 // through a yoke, a rigid T:
@@ -26,7 +27,7 @@ const margin = 1e-9
 // lowest place as in the other mechanisms. The axes stand at x = -b2 and +b2; the first body has the left one
 // and leads. The tail pin Q would best move on the line x = 0. The link holds it near: its pivot stands
 // at G = (l, -b1), a free choice made here so that Q is on x = 0 and the link lies square to it in the middle of Q's
-// stroke. The pivot is on the side of the second body; on the other side the motion would be a little different.
+// stroke, b1 below the crank's axis. The pivot is on the side of the second body; on the other side the motion would be a little different.
 // The cylinders have an axis each, so one body cannot run in the other's cylinder: this drive is for alpha and gamma
 // machines and not for beta, where the gap Y1 - Y2 would have to be one in space.
 //
@@ -142,8 +143,9 @@ func checkRossYoke(m *Mechanism) Fault {
 }
 
 // rossYokeGrid is the number of steps a turn in which every low point of the motion shows: a yoke near its dead point
-// has sharp ones.
-const rossYokeGrid = 180
+// has sharp ones. Of 1000 random yokes up to the margin from it 72 steps missed the
+// gap's end of three and 120 none.
+const rossYokeGrid = 120
 
 // rossYokeOffset is the largest distance of a rod's lower end from its axis over a turn [m].
 func rossYokeOffset(m *Mechanism) float64 {
@@ -163,11 +165,10 @@ func rossYokeOffset(m *Mechanism) float64 {
 		p.set(m, theta)
 		return p.two.x, p.two.vx, p.two.ax
 	}
-	least1, _ := lowest(one[:], 1, x1)
-	most1, _ := lowest(one[:], -1, x1)
-	least2, _ := lowest(two[:], 1, x2)
-	most2, _ := lowest(two[:], -1, x2)
-	return -min(least1, most1, least2, most2)
+	// 1 - cos(phi) is not negative, so x1 is never left of x2: the ends are the right one of x1 and the left one of x2.
+	right, _ := lowest(one[:], -1, x1)
+	left, _ := lowest(two[:], 1, x2)
+	return -min(right, left)
 }
 
 func extremesRossYoke(m *Mechanism) Extremes {
