@@ -19,6 +19,8 @@ func (c Cause) String() string {
 		return "connecting rod too short to turn"
 	case CranksCollide:
 		return "crank pins of the rhombic drive meet"
+	case YokeJams:
+		return "yoke and link cannot pass every crank angle"
 	case GapTooWide:
 		return "gap, wall or rod too large for the displacer or hot piston"
 	case AnnulusInverted:

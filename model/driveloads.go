@@ -104,9 +104,9 @@ func (w *Workspace) masses(e *Engine) (hot, cold float64) {
 	return w.geometry.hot.Mass, w.geometry.cold.Mass
 }
 
-// included is the angle between the axes of both cylinders [rad]; a beta machine has one axis.
+// included is the angle between the axes of both cylinders [rad]; a beta machine has one axis, a Ross yoke parallel ones.
 func (w *Workspace) included(e *Engine) float64 {
-	if e.Layout == Beta {
+	if e.Layout == Beta || e.Drive.Kind == drive.RossYoke {
 		return 0
 	}
 	return e.Drive.CylinderAngle
@@ -116,7 +116,7 @@ func (w *Workspace) included(e *Engine) float64 {
 // stand at the phase angle.
 func (w *Workspace) commonPin(e *Engine) bool {
 	m := &w.motion.mechanism
-	return (e.Layout == Alpha || e.Layout == Gamma) && m.Kind != drive.Rhombic &&
+	return (e.Layout == Alpha || e.Layout == Gamma) && (m.Kind == drive.Sinusoidal || m.Kind == drive.SliderCrank) &&
 		math.Abs(m.Stroke1-m.Stroke2) <= 1e-9*m.Stroke1 && math.Abs(e.Drive.CylinderAngle-m.Phase) <= 1e-9
 }
 

@@ -85,9 +85,13 @@ func (l Layout) HasDisplacer() bool { return l == Beta || l == Gamma }
 type Drive struct {
 	Kind         drive.Kind
 	PhaseAngle   float64 // expansion volume (displacer) leads the compression volume (piston) by this [rad]; sinusoidal, slider-crank; not read in a double-acting machine
-	RodLength    float64 // connecting rod [m]; slider-crank, rhombic
-	CrankRadius  float64 // [m]; rhombic
+	RodLength    float64 // connecting rod [m]; slider-crank, rhombic, Ross yoke
+	CrankRadius  float64 // [m]; rhombic, Ross yoke
 	Eccentricity float64 // distance of the crank axis from the cylinder axis [m]; rhombic
+
+	YokeArm       float64 // from crank pin to tail pin [m]; Ross yoke
+	YokeHalfWidth float64 // from crank pin to each rod's pin, and half the distance of the cylinders [m]; Ross yoke
+	LinkLength    float64 // that guides the tail pin [m]; Ross yoke
 
 	SpeedFluctuation float64 // largest less smallest speed over the mean that the flywheel is to allow [-]; 0 = no flywheel worked out
 	CylinderAngle    float64 // from the axis of the first body to that of the second, in the sense of rotation [rad]; alpha, gamma
@@ -98,7 +102,7 @@ type Drive struct {
 // Reciprocator is a displacer or a piston.
 type Reciprocator struct {
 	Bore       float64 // of its cylinder [m]
-	Stroke     float64 // [m]; with a rhombic drive it follows from the drive and is not given
+	Stroke     float64 // [m]; with a rhombic drive or a Ross yoke it follows from the drive and is not given
 	Rod        float64 // rod through the compression space [m]; displacer and double-acting piston only, 0 = none
 	Length     float64 // of the hot body (displacer, dome of an expansion or double-acting piston) from hot face to seal [m]
 	Gap        float64 // radial gap between hot body and cylinder wall [m]

@@ -23,6 +23,18 @@ func ringOfFour() Engine {
 	return e
 }
 
+// yokeAlpha is an invented small alpha machine with a Ross yoke.
+func yokeAlpha() Engine {
+	const mm = 1e-3
+	e := gammaSet()
+	e.Layout = Alpha
+	e.ExpansionPiston = e.Displacer
+	e.ExpansionPiston.Rod, e.ExpansionPiston.Bore, e.ExpansionPiston.Mass = 0, 70*mm, 0.8
+	e.CompressionPiston = e.ExpansionPiston
+	e.Drive = Drive{Kind: drive.RossYoke, CrankRadius: 12 * mm, YokeArm: 55 * mm, YokeHalfWidth: 50 * mm, LinkLength: 90 * mm, RodLength: 120 * mm}
+	return e
+}
+
 // TestDoubleActingIsARingOfAlphas: above its piston, and below that of its neighbour, each circuit has the volumes of an
 // alpha machine with harmonic motion and a phase angle of half a turn less a turn over n.
 func TestDoubleActingIsARingOfAlphas(t *testing.T) {
@@ -75,6 +87,7 @@ func TestTorqueGivesShaftWork(t *testing.T) {
 	for i := range 30 {
 		engines = append(engines, drawEngine(rng, &classes()[i%3]))
 	}
+	engines = append(engines, yokeAlpha())
 	closed := gammaSet()
 	closed.BufferVolume = 1e-3
 	engines = append(engines, closed)

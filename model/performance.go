@@ -160,6 +160,7 @@ const (
 	BundleTooWide           // cooler tubes do not fit in their shell
 	RodTooShort             // the connecting rod cannot turn
 	CranksCollide           // crank pins of a rhombic drive meet
+	YokeJams                // yoke and link of a Ross yoke do not close at every crank angle
 	BufferTooSmall          // buffer space smaller than the piston's displacement
 	NoHeat                  // the design takes up no heat
 	GapTooWide              // gap, wall or rod larger than the body

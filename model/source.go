@@ -16,11 +16,12 @@ type source struct {
 }
 
 const (
-	leastRise    = 50.0   // of the hot end above the coolant, at which a source counts as too weak [K]
-	hottestWall  = 1800.0 // at which the search for the wall temperature ends: above the melting point of every alloy [K]
-	firstWall    = 950.0  // first guess [K]
-	sourceStep   = 300.0  // largest step of the wall temperature [K]
-	sourcePasses = 20
+	leastRise      = 50.0   // of the hot end above the coolant, at which a source counts as too weak [K]
+	hottestWall    = 1800.0 // at which the search for the wall temperature ends: above the melting point of every alloy [K]
+	firstWall      = 950.0  // first guess [K]
+	sourceStep     = 300.0  // largest step of the wall temperature [K]
+	sourcePasses   = 20
+	sourceHalvings = 5 // of steps to a wall temperature at which the cycle does not settle
 	// heatRise is the relative change of the engine's heat over that of T - Tcoolant: well below 1, because the work of the
 	// expansion space goes with the pressure and little with temperature. Measured on the machines of the tests; only a first
 	// slope, which the secant replaces.
@@ -106,7 +107,7 @@ func (w *Workspace) runSource(dst *Performance, e *Engine, c *Corrections) Cause
 		return ColderThanCoolant
 	}
 	wall := min(max(firstWall, low), high)
-	near := false
+	near, halved := false, 0
 	var before, missed float64
 	for pass := range sourcePasses {
 		given, cause := w.source.give(e, wall)
@@ -121,6 +122,10 @@ func (w *Workspace) runSource(dst *Performance, e *Engine, c *Corrections) Cause
 				return SourceTooWeak
 			}
 			taken = 0
+		case cause == NoConvergence && pass > 0 && halved < sourceHalvings: // a step too far: half of it
+			halved++
+			wall, near = 0.5*(wall+before), false
+			continue
 		case cause != None:
 			return cause
 		}

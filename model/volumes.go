@@ -14,7 +14,8 @@ func (w *Workspace) setMotion(e *Engine) Cause {
 	m := &w.motion
 	m.mechanism = drive.Mechanism{
 		Kind: e.Drive.Kind, Phase: e.Drive.PhaseAngle, Rod: e.Drive.RodLength, Radius: e.Drive.CrankRadius,
-		Eccentricity: e.Drive.Eccentricity, Stroke1: g.hot.Stroke, Stroke2: g.cold.Stroke,
+		Eccentricity: e.Drive.Eccentricity, YokeArm: e.Drive.YokeArm, YokeHalfWidth: e.Drive.YokeHalfWidth, LinkLength: e.Drive.LinkLength,
+		Stroke1: g.hot.Stroke, Stroke2: g.cold.Stroke,
 	}
 	if e.Layout == DoubleActing {
 		// The second body is the neighbour in whose cylinder this circuit's cold space is. It runs ahead, so that the
@@ -24,12 +25,17 @@ func (w *Workspace) setMotion(e *Engine) Cause {
 			return BadInput
 		}
 	}
+	if e.Drive.Kind == drive.RossYoke && e.Layout != Alpha && e.Layout != Gamma {
+		return BadInput
+	}
 	switch m.mechanism.Check() {
 	case drive.None:
 	case drive.RodTooShort:
 		return RodTooShort
 	case drive.CranksCollide:
 		return CranksCollide
+	case drive.YokeJams:
+		return YokeJams
 	default:
 		return BadInput
 	}

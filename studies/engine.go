@@ -173,6 +173,11 @@ func (r *reader) selectors(e *model.Engine) bool {
 		r.fault(r.raw["drive.kind"].place, "engine.drive.kind", &fault{Contradiction, "a rhombic drive moves a displacer and a piston, an alpha machine has two pistons", "take beta or gamma, or another drive"})
 		ok = false
 	}
+	if ok && e.Layout == model.Beta && e.Drive.Kind == drive.RossYoke {
+		r.fault(r.raw["drive.kind"].place, "engine.drive.kind", &fault{Contradiction, "a Ross yoke drives two cylinders side by side, a beta machine has one",
+			"take alpha or gamma, or another drive"})
+		ok = false
+	}
 	if ok && e.Layout == model.DoubleActing && e.Drive.Kind != drive.Sinusoidal && e.Drive.Kind != drive.SliderCrank {
 		r.fault(r.raw["drive.kind"].place, "engine.drive.kind", &fault{Contradiction, "the pistons of a double-acting machine move each in the same way",
 			"take sinusoidal (as a swash plate gives) or slider-crank"})

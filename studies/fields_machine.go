@@ -16,7 +16,7 @@ func layoutNames() []string { return []string{"alpha", "beta", "gamma", "double-
 func matrixNames() []string { return []string{"woven-screen", "random-fibre"} }
 
 func driveNames() []string {
-	return []string{drive.Sinusoidal.String(), drive.SliderCrank.String(), drive.Rhombic.String()}
+	return []string{drive.Sinusoidal.String(), drive.SliderCrank.String(), drive.Rhombic.String(), drive.RossYoke.String()}
 }
 
 func gasNames() []string {
@@ -37,12 +37,23 @@ func alloyNames() []string {
 
 func whenPhase() Condition {
 	return Condition{"to sinusoidal and slider-crank drives of alpha, beta and gamma machines", func(e *model.Engine) bool {
-		return e.Drive.Kind != drive.Rhombic && e.Layout != model.DoubleActing
+		return cranked(e.Drive.Kind) && e.Layout != model.DoubleActing
 	}}
 }
 
 func whenRod() Condition {
-	return Condition{"to slider-crank and rhombic drives", func(e *model.Engine) bool { return e.Drive.Kind != drive.Sinusoidal }}
+	return Condition{"to slider-crank and rhombic drives and the Ross yoke", func(e *model.Engine) bool { return e.Drive.Kind != drive.Sinusoidal }}
+}
+
+// cranked says that the drive has a stroke and phase of its own for each body.
+func cranked(k drive.Kind) bool { return k == drive.Sinusoidal || k == drive.SliderCrank }
+
+func whenRadius() Condition {
+	return Condition{"to rhombic drives and the Ross yoke", func(e *model.Engine) bool { return !cranked(e.Drive.Kind) }}
+}
+
+func whenRossYoke() Condition {
+	return Condition{"to the Ross yoke", func(e *model.Engine) bool { return e.Drive.Kind == drive.RossYoke }}
 }
 
 func whenRhombic() Condition {
@@ -50,17 +61,24 @@ func whenRhombic() Condition {
 }
 
 func whenDisplacerStroke() Condition {
-	return Condition{"to beta and gamma machines without a rhombic drive, whose strokes follow from the drive",
-		func(e *model.Engine) bool { return e.Layout.HasDisplacer() && e.Drive.Kind != drive.Rhombic }}
+	return Condition{"to beta and gamma machines without rhombic drive or Ross yoke, whose strokes follow from the drive",
+		func(e *model.Engine) bool { return e.Layout.HasDisplacer() && cranked(e.Drive.Kind) }}
 }
 
 func whenPistonStroke() Condition {
-	return Condition{"to beta, gamma and double-acting machines without a rhombic drive, whose strokes follow from the drive",
-		func(e *model.Engine) bool { return e.Layout != model.Alpha && e.Drive.Kind != drive.Rhombic }}
+	return Condition{"to beta, gamma and double-acting machines without rhombic drive or Ross yoke, whose strokes follow from the drive",
+		func(e *model.Engine) bool { return e.Layout != model.Alpha && cranked(e.Drive.Kind) }}
+}
+
+func whenAlphaStroke() Condition {
+	return Condition{"to alpha machines without a Ross yoke, whose strokes follow from the drive",
+		func(e *model.Engine) bool { return e.Layout == model.Alpha && cranked(e.Drive.Kind) }}
 }
 
 func whenTwoAxes() Condition {
-	return Condition{"to alpha and gamma machines", func(e *model.Engine) bool { return e.Layout == model.Alpha || e.Layout == model.Gamma }}
+	return Condition{"to alpha and gamma machines without a Ross yoke", func(e *model.Engine) bool {
+		return (e.Layout == model.Alpha || e.Layout == model.Gamma) && e.Drive.Kind != drive.RossYoke
+	}}
 }
 
 func whenBuffer() Condition {
@@ -91,9 +109,15 @@ func machineFields() []Field {
 		measured("drive.rod_length", "length of the connecting rods", Length, "mm", "1 mm to 5 m", "20 mm to 1 m",
 			func(e *model.Engine) *float64 { return &e.Drive.RodLength }, when(whenRod())),
 		measured("drive.crank_radius", "radius of the cranks", Length, "mm", "1 mm to 2 m", "5 mm to 200 mm",
-			func(e *model.Engine) *float64 { return &e.Drive.CrankRadius }, when(whenRhombic())),
+			func(e *model.Engine) *float64 { return &e.Drive.CrankRadius }, when(whenRadius())),
 		measured("drive.eccentricity", "distance of the crank axes from the cylinder axis", Length, "mm", "0.1 mm to 2 m", "5 mm to 300 mm",
 			func(e *model.Engine) *float64 { return &e.Drive.Eccentricity }, when(whenRhombic())),
+		measured("drive.yoke_arm", "from the crank pin to the tail pin of the yoke", Length, "mm", "1 mm to 2 m", "10 mm to 300 mm",
+			func(e *model.Engine) *float64 { return &e.Drive.YokeArm }, when(whenRossYoke())),
+		measured("drive.yoke_half_width", "from the crank pin to the pin of each connecting rod; the cylinders stand twice as far apart", Length, "mm", "1 mm to 2 m", "10 mm to 300 mm",
+			func(e *model.Engine) *float64 { return &e.Drive.YokeHalfWidth }, when(whenRossYoke())),
+		measured("drive.link_length", "rocking link that guides the tail pin", Length, "mm", "1 mm to 5 m", "20 mm to 500 mm",
+			func(e *model.Engine) *float64 { return &e.Drive.LinkLength }, when(whenRossYoke())),
 		measured("drive.cylinder_angle", "from the axis of the first cylinder to that of the second, in the sense of rotation; at the phase angle both pistons share a crank pin", Angle, "deg", "0 deg to 180 deg", "",
 			func(e *model.Engine) *float64 { return &e.Drive.CylinderAngle }, when(whenTwoAxes()), defaults("0 deg")),
 		measured("drive.cylinder_distance", "of both cylinder axes along the shaft", Length, "mm", "0 mm to 5 m", "",
@@ -113,9 +137,9 @@ func machineFields() []Field {
 		measured("piston.rod", "diameter of the piston rod through the compression space", Length, "mm", "0 mm to 500 mm", "5 mm to 60 mm",
 			func(e *model.Engine) *float64 { return &e.Piston.Rod }, when(whenDoubleActing())))
 	rows = append(rows, hotBody("piston", "dome of the double-acting piston", piston, whenDoubleActing())...)
-	rows = append(rows, moving("expansion_piston", "expansion piston", expansion, whenAlpha(), whenAlpha())...)
+	rows = append(rows, moving("expansion_piston", "expansion piston", expansion, whenAlpha(), whenAlphaStroke())...)
 	rows = append(rows, hotBody("expansion_piston", "dome of the expansion piston", expansion, whenAlpha())...)
-	rows = append(rows, moving("compression_piston", "compression piston", compression, whenAlpha(), whenAlpha())...)
+	rows = append(rows, moving("compression_piston", "compression piston", compression, whenAlpha(), whenAlphaStroke())...)
 	rows = append(rows,
 		measured("expansion_space.clearance", "expansion space at its smallest", Volume, "cm3", "0 cm3 to 100 l", "0.2 cm3 to 5 l",
 			func(e *model.Engine) *float64 { return &e.ExpansionClearance }),

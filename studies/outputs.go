@@ -140,14 +140,18 @@ func driveOutputs() []Output {
 	for i := range rows {
 		switch rows[i].Name {
 		case "drive.side_thrust":
-			rows[i].When = Condition{"to slider-crank drives", func(e *model.Engine) bool { return e.Drive.Kind == drive.SliderCrank }}
+			rows[i].When = Condition{"to slider-crank drives and the Ross yoke", func(e *model.Engine) bool {
+				return e.Drive.Kind == drive.SliderCrank || e.Drive.Kind == drive.RossYoke
+			}}
 		case "drive.rod_force":
 			rows[i].When = Condition{"to drives with connecting rods", func(e *model.Engine) bool { return e.Drive.Kind != drive.Sinusoidal }}
 		case "drive.shaking_force":
 			rows[i].When = Condition{"to machines whose moving masses are all given", massesGiven}
 		case "drive.shaking_couple":
-			rows[i].When = Condition{"to alpha, gamma and double-acting machines whose moving masses are all given",
-				func(e *model.Engine) bool { return e.Layout != model.Beta && massesGiven(e) }}
+			rows[i].When = Condition{"to alpha, gamma and double-acting machines without a Ross yoke whose moving masses are all given",
+				func(e *model.Engine) bool {
+					return e.Layout != model.Beta && e.Drive.Kind != drive.RossYoke && massesGiven(e)
+				}}
 		case "drive.counterweight", "drive.residual_force":
 			rows[i].When = Condition{"to alpha, beta and gamma machines whose moving masses are all given",
 				func(e *model.Engine) bool { return e.Layout != model.DoubleActing && massesGiven(e) }}

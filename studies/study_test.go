@@ -134,6 +134,9 @@ func TestMoreMistakes(t *testing.T) {
 	}{
 		{"alpha with displacer", edit(t, "layout: gamma", "layout: alpha"), nil},
 		{"rhombic alpha", edit(t, "layout: gamma", "layout: alpha", "slider-crank", "rhombic"), []Code{Contradiction}},
+		{"Ross yoke in one cylinder", edit(t, "layout: gamma", "layout: beta", "slider-crank", "ross-yoke"), []Code{Contradiction}},
+		{"Ross yoke with strokes", edit(t, "slider-crank", "ross-yoke"), []Code{DoesNotApply, KeyMissing}},
+		{"ring with a rhombic drive", edit(t, "layout: gamma", "layout: double-acting", "slider-crank", "rhombic"), []Code{Contradiction}},
 		{"two heats", edit(t, "heat: {tube_wall: 700 degC}", "heat: {tube_wall: 700 degC, tube_gas: 600 degC}"), []Code{Contradiction}},
 		{"no heat", edit(t, "heat: {tube_wall: 700 degC}", ""), []Code{KeyMissing}},
 		{"bare burner", heated("{burner: {fuel: wood}}"), []Code{KeyMissing, KeyMissing, ChoiceUnknown}},

@@ -51,9 +51,9 @@ type Loads struct {
 	Rod2  Peak // of the second body
 	Side1 Peak // side thrust of the first body on its cylinder
 	Side2 Peak // of the second body
-	Pin1  Peak // crank pin of the first body; both bodies share it in a rhombic drive and on a common pin
+	Pin1  Peak // crank pin of the first body; both bodies share it in a rhombic drive, a Ross yoke and on a common pin
 	Pin2  Peak // of the second body, the same as Pin1 where they share it
-	Main  Peak // main bearings of one crank together: rhombic drive, and common pin
+	Main  Peak // main bearings of one crank together: rhombic drive, Ross yoke, and common pin
 }
 
 // Masses are what turns with a crank. The zero value is a drive whose rods have no mass and whose cranks balance
@@ -85,6 +85,18 @@ func Peaks(dst *Loads, m *drive.Mechanism, w *Masses, theta, P1, P2 []float64, o
 			dst.Main.take(pin.Add(Turning(w.Crank-w.Counterweight, omega)).Size(), at)
 			continue
 		}
+		if m.Kind == drive.RossYoke {
+			var l drive.RossYokeLoad
+			m.RossYokeForces(&l, at, P1[k], P2[k])
+			pin := RossYoke(&l, at).Add(Turning((w.Rod1+w.Rod2)*m.Radius, omega))
+			dst.Rod1.take(math.Abs(l.Rod1), at)
+			dst.Rod2.take(math.Abs(l.Rod2), at)
+			dst.Side1.take(math.Abs(l.Side1), at)
+			dst.Side2.take(math.Abs(l.Side2), at)
+			dst.Pin1.take(pin.Size(), at)
+			dst.Main.take(pin.Add(Turning(w.Crank-w.Counterweight, omega)).Size(), at)
+			continue
+		}
 		var one, two Slider
 		r1, r2 := 0.5*m.Stroke1, 0.5*m.Stroke2
 		switch m.Kind {
@@ -108,7 +120,7 @@ func Peaks(dst *Loads, m *drive.Mechanism, w *Masses, theta, P1, P2 []float64, o
 		}
 		dst.Pin1.take(pin1.Size(), at)
 	}
-	if w.Common || m.Kind == drive.Rhombic {
+	if w.Common || m.Kind == drive.Rhombic || m.Kind == drive.RossYoke {
 		dst.Pin2 = dst.Pin1
 	}
 }

@@ -276,7 +276,7 @@ func grouped(outputs []studies.Output) [][]*studies.Output {
 func (d *Design) ledger(w io.Writer, s Style) error {
 	p := &d.Performance
 	share := func(v float64) string { return fmt.Sprintf("%.1f", math.Round(1000*v/p.HeatIn)/10+0) }
-	watts := func(v float64) string { return fmt.Sprintf("%.0f", v) }
+	watts := func(v float64) string { return fmt.Sprintf("%.0f", math.Round(v)+0) }
 	table := Table{Title: "Where the heat goes", Head: [][]string{{"entry", "W", "% of heat in", "what and whereto"}}, Left: []int{3}, Wrap: []int{3}, Spare: 3}
 	add := func(name string, v float64, text string) {
 		table.Rows = append(table.Rows, []string{name, watts(v), share(v), text})
