@@ -42,6 +42,7 @@ type Solver struct {
 	elA, elB, elS         [MaxCells]float64
 	elA1, elB1, elS1      [MaxCells]float64
 	state                 gas.State
+	isobar                gas.Isobar
 
 	// Film factors, set once a cycle at the mean temperature of each cell.
 	filmScale [MaxCells]float64 // k Film / Dh [W/K]

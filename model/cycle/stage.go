@@ -1,6 +1,10 @@
 package cycle
 
-import "math"
+import (
+	"math"
+
+	"hotfront/model/gas"
+)
 
 // stage advances the unknowns of one implicit stage by one Newton step about the prediction held in
 // s.t, s.p and s.flow, and leaves the new temperatures, pressure and flows there.
@@ -134,14 +138,16 @@ const (
 // properties fills mass and its derivatives, enthalpy, heat capacity and film of every cell at the
 // predicted state.
 func (s *Solver) properties(p float64) {
-	for i := range s.n {
-		s.gas.At(&s.state, s.t[i], p)
-		v := 1 / s.state.V
-		m := s.volume[i] * v
-		s.m[i] = m
-		s.mT[i] = -m * s.state.VT * v
-		s.mp[i] = -m * s.state.VP * v
-		s.h[i], s.cp[i], s.hp[i] = s.state.H, s.state.Cp, s.state.HP
+	n := s.n
+	m, mT, mp, volume := s.m[:n], s.mT[:n], s.mp[:n], s.volume[:n]
+	s.isobar.Set(&s.gas, p)
+	s.isobar.At(&gas.Columns{V: m, VT: mT, VP: mp, H: s.h[:n], Cp: s.cp[:n], HP: s.hp[:n]}, s.t[:n])
+	for i := range n {
+		v := 1 / m[i]
+		mass := volume[i] * v
+		m[i] = mass
+		mT[i] *= -mass * v
+		mp[i] *= -mass * v
 	}
 }
 

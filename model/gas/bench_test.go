@@ -33,3 +33,21 @@ func BenchmarkTransport(b *testing.B) {
 	}
 	b.ReportAllocs()
 }
+
+// BenchmarkIsobar is for 26 temperatures, as many as a gas path has cells; BenchmarkAt for one.
+func BenchmarkIsobar(b *testing.B) {
+	g := New(Hydrogen)
+	var T, v, vT, vp, h, cp, hp [26]float64
+	for i := range T {
+		T[i] = 300 + 25*float64(i)
+	}
+	c := Columns{v[:], vT[:], vp[:], h[:], cp[:], hp[:]}
+	var s Isobar
+	p := 50e5
+	b.ReportAllocs()
+	for b.Loop() {
+		s.Set(&g, p)
+		s.At(&c, T[:])
+		p += 1
+	}
+}

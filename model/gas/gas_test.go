@@ -243,3 +243,34 @@ func TestAllocations(t *testing.T) {
 		t.Errorf("allocations: %g", n)
 	}
 }
+
+// TestIsobarIsAt: the sums at one pressure give what At gives.
+func TestIsobarIsAt(t *testing.T) {
+	var T []float64
+	for i := range 120 {
+		T = append(T, 210+float64(i)*12)
+	}
+	n := len(T)
+	c := Columns{make([]float64, n), make([]float64, n), make([]float64, n), make([]float64, n), make([]float64, n), make([]float64, n)}
+	gases := []Gas{Perfect(2077, 5.0/3, 3e-5, 0.2)}
+	for _, kind := range Kinds() {
+		gases = append(gases, New(kind))
+	}
+	for _, g := range gases {
+		for _, p := range []float64{1e3, 1e5, 4e6, 25e6} {
+			var b Isobar
+			b.Set(&g, p)
+			b.At(&c, T)
+			var s State
+			for i := range T {
+				g.At(&s, T[i], p)
+				for _, v := range [][3]float64{{c.V[i], s.V, s.V}, {c.VT[i], s.VT, s.VT}, {c.VP[i], s.VP, s.VP}, {c.H[i], s.H, s.Cp * T[i]},
+					{c.Cp[i], s.Cp, s.Cp}, {c.HP[i], s.HP, s.V}} { // the size of each sum's terms
+					if math.Abs(v[0]-v[1]) > 1e-13*math.Abs(v[2]) {
+						t.Fatalf("%v %g Pa %g K: %.17g, At gives %.17g", g.Kind, p, T[i], v[0], v[1])
+					}
+				}
+			}
+		}
+	}
+}
