@@ -6,6 +6,7 @@ import (
 
 	"hotfront/model/drive"
 	"hotfront/model/gas"
+	"hotfront/model/heat"
 	"hotfront/model/metal"
 )
 
@@ -103,13 +104,14 @@ func sensible(c *class, p *Performance) bool {
 func drawSensible(rng *rand.Rand, c *class, w *Workspace) (Engine, Performance) {
 	none := NoCorrections()
 	var p Performance
-	for {
+	for range 10000 {
 		e := drawEngine(rng, c)
 		Evaluate(&p, &e, &none, w)
 		if sensible(c, &p) {
 			return e, p
 		}
 	}
+	panic("no sensible design among ten thousand: the model is broken")
 }
 
 // wildEngine draws a design from a box far wider than any study would give: every length over
@@ -126,9 +128,10 @@ func wildEngine(rng *rand.Rand) Engine {
 	alloys := metal.Alloys()
 	alloy := func() metal.Alloy { return alloys[rng.IntN(len(alloys))] }
 	e := Engine{
-		Layout: Layout(rng.IntN(3)), Gas: gas.Kinds()[rng.IntN(4)], ChargePressure: lg(0.5, 300) * 1e5, Speed: lg(30, 12000) / 60,
-		Drive: Drive{Kind: drive.Kind(rng.IntN(3)), PhaseAngle: 2 * math.Pi * rng.Float64(), RodLength: stroke * lg(0.6, 5),
-			CrankRadius: stroke * lg(0.2, 0.6), Eccentricity: stroke * lg(0.3, 1)},
+		Layout: Layout(rng.IntN(4)), Cylinders: 3 + rng.IntN(10), Gas: gas.Kinds()[rng.IntN(4)], ChargePressure: lg(0.5, 300) * 1e5, Speed: lg(30, 12000) / 60,
+		Drive: Drive{Kind: drive.Kind(rng.IntN(4)), PhaseAngle: 2 * math.Pi * rng.Float64(), RodLength: stroke * lg(0.6, 5),
+			CrankRadius: stroke * lg(0.2, 0.6), Eccentricity: stroke * lg(0.3, 1), YokeArm: stroke * lg(0.5, 3), YokeHalfWidth: stroke * lg(0.5, 3),
+			LinkLength: stroke * lg(0.5, 5), SpeedFluctuation: 0.02, CylinderAngle: math.Pi * rng.Float64(), CylinderCircle: bore * lg(1, 5)},
 		Cylinder:           Cylinder{Wall: lg(0.5, 20) * mm, Alloy: alloy()},
 		ExpansionClearance: swept * lg(0.001, 2), CompressionClearance: swept * lg(0.001, 2), BufferVolume: swept * lg(0.5, 50) * float64(rng.IntN(2)),
 		Heater: Heater{TubeCount: int(lg(1, 1000)), TubeBore: lg(0.5, 20) * mm, TubeWall: lg(0.2, 5) * mm, TubeLength: lg(20, 2000) * mm,
@@ -137,11 +140,21 @@ func wildEngine(rng *rand.Rand) Engine {
 			WireDiameter: lg(0.01, 1) * mm, Porosity: 0.25 + 0.73*rng.Float64(), Alloy: alloy(), CanisterWall: lg(0.2, 5) * mm, CanisterAlloy: alloy()},
 		Cooler: Cooler{TubeCount: int(lg(1, 3000)), TubeBore: lg(0.3, 10) * mm, TubeWall: lg(0.1, 2) * mm, TubeLength: lg(10, 1000) * mm,
 			EndLoss: 5 * rng.Float64(), Alloy: alloy()},
-		Heat:    Heat{Kind: HeatKind(rng.IntN(2)), Temperature: lg(350, 1400)},
+		Heat:    wildHeat(rng, bore),
 		Coolant: Coolant{Inlet: 260 + 80*rng.Float64(), Flow: lg(0.001, 10), Film: lg(100, 20000)},
 	}
 	e.Heater.HeatedLength = e.Heater.TubeLength * lg(0.1, 1)
 	e.Cooler.CooledLength = e.Cooler.TubeLength * lg(0.1, 1)
+	e.Heater.Rows = 1 + rng.IntN(4)
+	if e.Heat.Kind == HeatBurner || rng.IntN(2) == 0 {
+		e.Heater.RingDiameter = bore * lg(1, 20)
+	}
+	switch { // what a study refuses
+	case e.Layout == Alpha && e.Drive.Kind == drive.Rhombic, e.Layout == Beta && e.Drive.Kind == drive.RossYoke,
+		e.Layout == DoubleActing && e.Drive.Kind > drive.SliderCrank:
+		e.Drive.Kind = drive.Kind(rng.IntN(2))
+	}
+	body.Mass, piston.Mass = lg(0.01, 100)*float64(rng.IntN(2)), lg(0.01, 100)
 	if e.Layout == Alpha {
 		body.Rod = 0
 		e.ExpansionPiston, e.CompressionPiston = body, piston
@@ -150,6 +163,9 @@ func wildEngine(rng *rand.Rand) Engine {
 			piston.Bore = body.Bore
 		}
 		e.Displacer, e.Piston = body, piston
+		if e.Layout == DoubleActing {
+			e.Piston = body
+		}
 	}
 	for _, d := range []*Duct{&e.ExpansionDuct, &e.HotDuct, &e.ColdDuct, &e.CompressionDuct} {
 		if rng.IntN(2) == 0 {
@@ -157,4 +173,28 @@ func wildEngine(rng *rand.Rand) Engine {
 		}
 	}
 	return e
+}
+
+// wildHeat draws any way to heat the engine; burner and receiver may be of any size against it.
+func wildHeat(rng *rand.Rand, bore float64) Heat {
+	lg := func(a, b float64) float64 { return draw(rng, [2]float64{a, b}) }
+	kinds := heat.FuelKinds()
+	power := math.Pow(bore, 3) * lg(1e5, 1e9)
+	h := Heat{
+		Kind: HeatKind(rng.IntN(4)), Temperature: lg(350, 1400),
+		Burner: Burner{
+			FuelKind: kinds[rng.IntN(len(kinds)-1)], FuelPower: power * float64(rng.IntN(2)), ExcessAir: lg(1, 5),
+			PreheaterEffectiveness: 0.99 * rng.Float64() * float64(rng.IntN(2)), Ambient: 260 + 60*rng.Float64(),
+			CasingShare: 0.3 * rng.Float64(), CasingConductance: lg(0.01, 10) * float64(rng.IntN(2)),
+			Arrangement: heat.Arrangement(rng.IntN(2)), RowPitch: lg(0.5, 5), FlameEmissivity: rng.Float64(), WallEmissivity: 0.1 + 0.9*rng.Float64(),
+		},
+		Receiver: Receiver{
+			Power: power, ApertureDiameter: bore * lg(0.1, 10), WallArea: bore * bore * lg(1, 100), Absorptance: rng.Float64(), Emittance: rng.Float64(),
+			WindowTransmittance: rng.Float64(), WindowThermal: rng.Float64(), Film: lg(1, 100), CasingConductance: lg(0.01, 10), Ambient: 260 + 60*rng.Float64(),
+		},
+	}
+	if rng.IntN(2) == 0 {
+		h.Burner.Fins = heat.Fins{Kind: heat.FinKind(1 + rng.IntN(2)), Height: lg(0.5, 10) * 1e-3, Thickness: lg(0.1, 2) * 1e-3, Pitch: lg(0.5, 10) * 1e-3, Count: 1 + rng.IntN(20)}
+	}
+	return h
 }
