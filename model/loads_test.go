@@ -113,6 +113,15 @@ func TestTorqueGivesShaftWork(t *testing.T) {
 			t.Errorf("engine %d, layout %d: torque gives %.9g J, the shaft %.9g J", i, e.Layout, shaft, p.BrakePower/e.Speed)
 		}
 		within(t, "gas forces", gas*e.circuits(), p.PVPower/e.Speed, 1e-7)
+		// The mean over even steps of a smooth torque is the mean over the turn.
+		mean := 0.0
+		turns := Turn(nil, w)
+		for _, s := range turns {
+			mean += s.Torque / float64(len(turns))
+		}
+		if math.Abs(mean-p.Torque) > 0.02*(math.Abs(p.Torque)+p.Drive.TorqueMax-p.Drive.TorqueMin) {
+			t.Errorf("engine %d: mean torque %g N m over the steps, %g", i, mean, p.Torque)
+		}
 	}
 	if checked < 25 {
 		t.Errorf("only %d engines had a result", checked)

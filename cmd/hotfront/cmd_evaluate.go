@@ -64,6 +64,7 @@ func (p *program) evaluate(file string, o *evaluateOptions) error {
 	model.Evaluate(&d.Performance, &d.Engine, &s.Corrections, production)
 	if d.Performance.Cause == model.None {
 		d.Heater = model.HeaterProfile(nil, &d.Engine, production)
+		d.Turn = model.Turn(nil, production)
 	}
 	var fine model.Performance
 	w := model.NewWorkspaceGrid(model.SecondLawGrid())

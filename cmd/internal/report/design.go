@@ -20,6 +20,7 @@ type Design struct {
 	Performance model.Performance
 	SecondLaw   *model.SecondLaw // may be nil
 	Heater      []model.HeaterCell
+	Turn        []model.TurnSample
 }
 
 // DesignJSON is a Design as JSON holds it: SI, names as `hotfront fields` lists them.
@@ -32,6 +33,7 @@ type DesignJSON struct {
 	Losses      map[string]float64 `json:"losses,omitempty"`
 	LostWork    map[string]float64 `json:"lost_work,omitempty"`
 	Heater      []heaterJSON       `json:"heater_along,omitempty"`
+	Turn        []turnJSON         `json:"over_turn,omitempty"`
 	Limits      []LimitJSON        `json:"limits,omitempty"`
 	Corrections map[string]any     `json:"corrections"`
 	Warnings    []string           `json:"warnings"`
@@ -44,6 +46,16 @@ type heaterJSON struct {
 	Inner    float64 `json:"inner_temperature"`
 	Gas      float64 `json:"gas_temperature"`
 	Flux     float64 `json:"heat_flux"`
+}
+
+type turnJSON struct {
+	Angle             float64 `json:"crank_angle"`
+	Pressure          float64 `json:"pressure"`
+	ExpansionVolume   float64 `json:"expansion_volume"`
+	CompressionVolume float64 `json:"compression_volume"`
+	HotForce          float64 `json:"hot_force"`
+	ColdForce         float64 `json:"cold_force"`
+	Torque            float64 `json:"torque"`
 }
 
 // LimitJSON is one limit, SI.
@@ -71,6 +83,9 @@ func (d *Design) JSON() DesignJSON {
 	j.LostWork = d.lostWork()
 	for _, c := range d.Heater {
 		j.Heater = append(j.Heater, heaterJSON(c))
+	}
+	for _, c := range d.Turn {
+		j.Turn = append(j.Turn, turnJSON(c))
 	}
 	j.Limits = Limits(d.Study, &d.Engine, &d.Performance)
 	j.Warnings = append(j.Warnings, d.Performance.Warnings.Texts()...)
@@ -221,6 +236,9 @@ func (d *Design) Table(w io.Writer, s Style) error {
 	if err := d.heater(w, s); err != nil {
 		return err
 	}
+	if err := d.turn(w, s); err != nil {
+		return err
+	}
 	if err := d.limits(w, s); err != nil {
 		return err
 	}
@@ -357,6 +375,39 @@ func (d *Design) heater(w io.Writer, s Style) error {
 			row = append(row, studies.FormatSI(t, studies.Temperature, "degC", 3))
 		}
 		table.Rows = append(table.Rows, append(row, fmt.Sprintf("%.3g", c.Flux/1e4)))
+	}
+	if err := table.Write(w, Style{Ruled: s.Ruled}); err != nil {
+		return err
+	}
+	_, err := fmt.Fprintln(w)
+	return err
+}
+
+// turn prints pressure, forces and torque over a turn, every other step.
+func (d *Design) turn(w io.Writer, s Style) error {
+	if len(d.Turn) == 0 {
+		return nil
+	}
+	cold := "piston"
+	switch d.Engine.Layout {
+	case model.Alpha:
+		cold = "compression piston"
+	case model.DoubleActing:
+		cold = ""
+	}
+	hot := map[model.Layout]string{model.Alpha: "expansion piston", model.Beta: "displacer", model.Gamma: "displacer", model.DoubleActing: "piston"}[d.Engine.Layout]
+	table := Table{Title: "Over a turn: gas forces upwards, torque with inertia", Head: [][]string{
+		{"crank angle", "pressure", hot, "torque"}, {"deg", "bar", "kN", "N m"}}}
+	if cold != "" {
+		table.Head = [][]string{{"crank angle", "pressure", hot, cold, "torque"}, {"deg", "bar", "kN", "kN", "N m"}}
+	}
+	for i := 1; i < len(d.Turn); i += 2 {
+		c := &d.Turn[i]
+		row := []string{fmt.Sprintf("%.0f", c.Angle*180/math.Pi), fmt.Sprintf("%.1f", c.Pressure/1e5), fmt.Sprintf("%.2f", c.HotForce/1e3)}
+		if cold != "" {
+			row = append(row, fmt.Sprintf("%.2f", c.ColdForce/1e3))
+		}
+		table.Rows = append(table.Rows, append(row, fmt.Sprintf("%.0f", math.Round(c.Torque)+0)))
 	}
 	if err := table.Write(w, Style{Ruled: s.Ruled}); err != nil {
 		return err
