@@ -224,8 +224,8 @@ func (r *reader) follow(f *Field, e *model.Engine) {
 
 func (r *reader) mustEqual(f *Field, s scalar, e *model.Engine) {
 	source, _ := FieldNamed(r.fields, f.Follows)
-	if r.bad[f.Follows] {
-		return
+	if _, given := r.raw[f.Follows]; r.bad[f.Follows] || !given {
+		return // reported there
 	}
 	if want := source.Get(e); math.Abs(f.Get(e)-want) > 1e-9*math.Abs(want) {
 		r.fault(s.place, "engine."+f.Path, &fault{Contradiction,
