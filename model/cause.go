@@ -33,6 +33,8 @@ func (c Cause) String() string {
 		return "heat source too weak or too cold"
 	case SourceTooHot:
 		return "heat source drives the tube wall above 1530 degC"
+	case ApertureTooWide:
+		return "aperture larger than the wall of the receiver"
 	case BankImpossible:
 		return "tubes or fins leave the burner's gas no way through"
 	case BankRange:

@@ -169,6 +169,7 @@ const (
 	ColderThanCoolant       // hot end not above the coolant
 	SourceTooWeak           // the heat source does not keep the hot end 50 K above the coolant, or gives the heat at no fuel power
 	SourceTooHot            // the heat source drives the tube wall above 1800 K
+	ApertureTooWide         // aperture of the receiver larger than its wall
 	BankImpossible          // tubes, pitches or fins that the burner's gas cannot flow through
 	BankRange               // flow or pitches of the burner's tube bank, or its fins, outside their laws
 	NoConvergence           // periodic state not reached

@@ -38,6 +38,9 @@ func (s *source) prepare(e *Engine, g *geometry) Cause {
 		return s.prepareBurner(e, g)
 	case HeatReceiver:
 		r := &e.Heat.Receiver
+		if r.WallArea < circle(r.ApertureDiameter) {
+			return ApertureTooWide
+		}
 		s.receiver = heat.Receiver{
 			Power: r.Power, ApertureArea: circle(r.ApertureDiameter), WallArea: r.WallArea,
 			Absorptance: r.Absorptance, Emittance: r.Emittance,
@@ -62,7 +65,7 @@ func (s *source) prepareBurner(e *Engine, g *geometry) Cause {
 	}
 	fins := in.Fins
 	alloy := metal.Of(h.Alloy)
-	hot := firstWall
+	hot := firstWall // the little that the conductivity varies matters little
 	if e.Heat.Held() {
 		hot = e.Heat.Temperature
 	}

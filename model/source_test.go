@@ -128,6 +128,7 @@ func TestSourceCauses(t *testing.T) {
 	}{
 		"no sun":     {dishReceiver(100), SourceTooWeak},
 		"ten suns":   {dishReceiver(300e3), SourceTooHot},
+		"wide mouth": {with(dishReceiver(19e3), func(e *Engine) { e.Heat.Receiver.ApertureDiameter = 0.6 }), ApertureTooWide},
 		"no ring":    {with(pelletBurner(), func(e *Engine) { e.Heater.RingDiameter = 0 }), BadInput},
 		"lean air":   {with(pelletBurner(), func(e *Engine) { e.Heat.Burner.ExcessAir = 0.9 }), BadInput},
 		"tubes meet": {with(pelletBurner(), func(e *Engine) { e.Heater.RingDiameter, e.Heat.Burner.RowPitch = 0.05, 0.2 }), BankImpossible},
