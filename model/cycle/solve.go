@@ -10,6 +10,8 @@ const (
 	tolCoarse   = 2e-2 // balance and profile at which the coarse grid has done its part
 	tolPressure = 2e-4 // mean pressure over the one asked for, less one
 	tolWall     = 0.1  // change of a wall temperature between cycles [K]
+
+	farMove = 30.0 // of the hot end, from which on a solution goes on over the coarse grid [K]
 )
 
 // Result is the periodic state, in joules a cycle and kelvin.
@@ -47,7 +49,7 @@ type Settings struct {
 }
 
 // DefaultSettings are those of production runs.
-func DefaultSettings() Settings { return Settings{MaxCycles: 60, Newton: 1, Depth: 6} }
+func DefaultSettings() Settings { return Settings{MaxCycles: 60, Newton: 1, Depth: 8} }
 
 // Solve finds the periodic state of the path and fills dst. dst.Converged says whether it was
 // reached; the rest of dst holds the last cycle all the same.
@@ -78,7 +80,9 @@ func (s *Solver) Resume(dst *Result, path *Path, set Settings) {
 	old := dst.Outer
 	s.path = path
 	s.move = &path.Fine
-	s.warm(old)
+	if moved := s.warm(old); moved > farMove && path.Coarse.Steps > 0 {
+		s.move = &path.Coarse
+	}
 	s.mixing.reset(set.Depth)
 	s.cycles(dst, path, set, false)
 	if !dst.Converged {
@@ -91,8 +95,8 @@ func (s *Solver) Resume(dst *Result, path *Path, set Settings) {
 }
 
 // warm moves gas and metal with the hot end, each by its place between the temperature of the coldest wall
-// and that behind the heater walls, which was old [K].
-func (s *Solver) warm(old float64) {
+// and that behind the heater walls, which was old [K], and returns by how much that has moved [K].
+func (s *Solver) warm(old float64) (moved float64) {
 	cold, outer := math.Inf(1), old
 	for i := range s.n {
 		if s.kind[i] != Tube {
@@ -104,8 +108,9 @@ func (s *Solver) warm(old float64) {
 		}
 	}
 	stretch := (outer - cold) / (old - cold)
+	moved = math.Abs(outer - old)
 	if !(stretch > 0) {
-		return
+		return moved
 	}
 	for i := range s.n {
 		s.t[i] = cold + (s.t[i]-cold)*stretch
@@ -113,6 +118,7 @@ func (s *Solver) warm(old float64) {
 			s.wall[i] = cold + (s.wall[i]-cold)*stretch
 		}
 	}
+	return moved
 }
 
 func (s *Solver) attempt(dst *Result, path *Path, set Settings) {
