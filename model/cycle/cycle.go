@@ -2,8 +2,8 @@ package cycle
 
 import "math"
 
-// film sets the film conductances of a step from the flows at its start, with the matrix temperature of
-// the stage eliminated:
+// film sets the film conductances of a step from the flows expected in its middle, straight on from the last two
+// starts of a step, with the matrix temperature of the stage eliminated:
 //
 //	Tw = Tw* + a (-Q)/C,  Q = UA (Tw - T)   gives   Q = UAe (Tw* - T),  UAe = UA C/(C + a UA).
 func (s *Solver) film(a float64) {
@@ -13,11 +13,11 @@ func (s *Solver) film(a float64) {
 		var flow float64
 		switch i {
 		case 0:
-			flow = s.flow[0]
+			flow = 1.5*s.flow[0] - 0.5*s.flowOld[0]
 		case last:
-			flow = s.flow[last-1]
+			flow = 1.5*s.flow[last-1] - 0.5*s.flowOld[last-1]
 		default:
-			flow = 0.5 * (s.flow[i-1] + s.flow[i])
+			flow = 0.75*(s.flow[i-1]+s.flow[i]) - 0.25*(s.flowOld[i-1]+s.flowOld[i])
 		}
 		if flow < 0 {
 			flow = -flow
@@ -68,6 +68,7 @@ func (s *Solver) run() bool {
 			}
 		}
 		s.film(a)
+		copy(s.flowOld[:s.n], s.flow[:s.n])
 		if !s.newtonSteps(a, k) {
 			return false
 		}

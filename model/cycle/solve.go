@@ -222,7 +222,7 @@ func (s *Solver) begin(set Settings) {
 		s.volume[i] = c.Volume
 		s.wall[i] = c.Wall
 		s.t[i] = c.Wall
-		s.flow[i] = 0
+		s.flow[i], s.flowOld[i] = 0, 0
 		s.dT[i] = 0
 		s.metalDrift[i] = 0
 		s.conduct[i], s.axialFlow[i] = 0, 0

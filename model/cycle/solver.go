@@ -19,12 +19,13 @@ type Solver struct {
 	faceKind [MaxCells]faceKind
 
 	// State and prediction.
-	p    float64
-	t    [MaxCells]float64 // gas temperature [K]
-	dT   [MaxCells]float64 // its change in the last Newton step [K]
-	flow [MaxCells]float64 // mass flow over face i|i+1, positive towards the compression space [kg/s]
-	wall [MaxCells]float64 // wall or matrix temperature [K]
-	lift float64           // of the temperature behind the heater walls, to meet Path.Target [K]
+	p       float64
+	t       [MaxCells]float64 // gas temperature [K]
+	dT      [MaxCells]float64 // its change in the last Newton step [K]
+	flow    [MaxCells]float64 // mass flow over face i|i+1, positive towards the compression space [kg/s]
+	flowOld [MaxCells]float64 // flow at the start of the last step [kg/s]
+	wall    [MaxCells]float64 // wall or matrix temperature [K]
+	lift    float64           // of the temperature behind the heater walls, to meet Path.Target [K]
 
 	// Conserved quantities at the start of the step, and what the running stage starts from.
 	mass, energy          [MaxCells]float64 // [kg], [J]
