@@ -67,7 +67,7 @@ type Mechanism struct {
 	Stroke2      float64 // stroke of the second body [m]; sinusoidal, slider-crank
 
 	YokeArm       float64 // distance of the tail pin from the crank pin [m]; Ross yoke
-	YokeHalfWidth float64 // distance of each rod's pin from the crank pin, and of each cylinder's axis from the crank's axis [m]; Ross yoke
+	YokeHalfWidth float64 // each rod's pin from the crank pin, each cylinder's axis from the crank's axis [m]; Ross yoke
 	LinkLength    float64 // link that guides the tail pin [m]; Ross yoke
 }
 

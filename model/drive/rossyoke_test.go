@@ -71,6 +71,49 @@ func TestRossYokeCloses(t *testing.T) {
 	}
 }
 
+// TestRossYokeShortLink: with a link short beside the arm the tail pin goes far round its pivot, and the other point that
+// the two circles share passes the middle of the stroke, w = 0 and c = 0 with h < 0. The link keeps its length there.
+func TestRossYokeShortLink(t *testing.T) {
+	var p rossPose
+	found := 0
+	for i, m := range rossYokes() {
+		r, b1, l := m.Radius, m.YokeArm, m.LinkLength
+		size := b1 + l
+		// c = g K (2 + k^2 g K) changes its sign with K + 2 l (l - r cos(theta)).
+		c := func(theta float64) float64 {
+			s, c := math.Sincos(theta)
+			return 0.5*r*r + b1*r*s + 2*l*(l-r*c)
+		}
+		const n = 360
+		for k := range n {
+			lo, hi := 2*math.Pi*float64(k)/n, 2*math.Pi*float64(k+1)/n
+			if (c(lo) > 0) == (c(hi) > 0) {
+				continue
+			}
+			found++
+			for mid := 0.5 * (lo + hi); mid > lo && mid < hi; mid = 0.5 * (lo + hi) {
+				if (c(lo) > 0) == (c(mid) > 0) {
+					lo = mid
+				} else {
+					hi = mid
+				}
+			}
+			for away := 1e-17; away < 1e-3; away *= 1.1 {
+				for _, th := range []float64{lo - away, lo + away} {
+					p.set(&m, th)
+					at := fmt.Sprintf("%s theta %.17g ", name(i, &m), th)
+					qx, qy := p.px+b1*p.sin, p.py-b1*p.cos
+					near(t, at+"link", math.Hypot(l-qx, -b1-qy), l, 4e-15*size)
+					near(t, at+"arm", math.Hypot(p.sin, p.cos), 1, 4e-15*size/b1)
+				}
+			}
+		}
+	}
+	if found != 2 {
+		t.Errorf("%d such places, want the two of the last one", found)
+	}
+}
+
 // TestRossYokeMidPosition: the tail pin goes up and down between -b1 - r and -b1 + r on the crank's axis line, with the
 // link square to it in the middle, as far as the link's arc allows: u = w^2/(2 l) to first order.
 func TestRossYokeMidPosition(t *testing.T) {
@@ -321,6 +364,63 @@ func TestRossYokeForces(t *testing.T) {
 	near(t, "torque", l.Moment, -300*0.008, 1e-9)
 }
 
+// TestRossYokeInertia: masses at the ends of the crossbar, against the loss of their kinetic energy by central difference
+// of the energy itself, and in the limit of a long link against the turning of a rigid bar about its middle: the
+// link then lies along x and sin(phi) = -r cos(theta)/b1.
+func TestRossYokeInertia(t *testing.T) {
+	const omega, m1, m2 = 120.0, 0.3, 0.2
+	rng := rand.New(rand.NewPCG(9, 10))
+	set := rossYokes()
+	for range 100 {
+		set = append(set, turnable(rng, 0.9))
+	}
+	var p rossPose
+	var l RossYokeLoad
+	for i, m := range set {
+		energy := func(theta float64) float64 {
+			p.set(&m, theta)
+			v1, v2 := math.Hypot(p.one.vx, p.one.vy), math.Hypot(p.two.vx, p.two.vy)
+			return 0.5 * omega * omega * (m1*v1*v1 + m2*v2*v2)
+		}
+		most := 0.0
+		for k := range 180 {
+			most = max(most, energy(2*math.Pi*float64(k)/180))
+		}
+		for k := range 180 {
+			th := 2 * math.Pi * float64(k) / 180
+			m.RossYokeInertia(&l, th, m1, m2, omega)
+			// Fourth order: the largest miss is 1.8e-9 of the energy for h = 2e-3, and so 16 times less here; rounding,
+			// 1e-16/h of it, is less still.
+			const h = 1e-3
+			slope := (8*(energy(th+h)-energy(th-h)) - energy(th+2*h) + energy(th-2*h)) / (12 * h)
+			near(t, fmt.Sprintf("%s theta %.3f torque", name(i, &m), th), l.Moment, -slope, 3e-10*most)
+		}
+	}
+	for i, m := range rossYokes() {
+		m.LinkLength = 1e100
+		r, b1, b2 := m.Radius, m.YokeArm, m.YokeHalfWidth
+		const mass = 0.25
+		for k := range 90 {
+			s, c := math.Sincos(2 * math.Pi * float64(k) / 90)
+			m.RossYokeInertia(&l, 2*math.Pi*float64(k)/90, mass, mass, omega)
+			sin := -r * c / b1
+			cos := math.Sqrt(1 - sin*sin)
+			turn := r * s / b1 / cos
+			bend := (r*c/b1 + sin*turn*turn) / cos
+			link := 2 * mass * b2 * b2 * bend * omega * omega / (b1 * cos)
+			both := 2 * mass * r * omega * omega
+			at := fmt.Sprintf("%s step %d ", name(i, &m), k)
+			tol := 2e-14 * both * (1 + b2*b2/(b1*b1))
+			near(t, at+"link", l.Link, link, tol)
+			near(t, at+"pin along x", l.PinX, both*c+link, tol)
+			near(t, at+"pin along y", l.PinY, both*s, tol)
+			if l.Rod1 != 0 || l.Rod2 != 0 || l.Side1 != 0 || l.Side2 != 0 {
+				t.Errorf("%s: %+v", at, l)
+			}
+		}
+	}
+}
+
 // The forces allocate nothing and another kind is refused.
 func TestRossYokeForcesMisuse(t *testing.T) {
 	m := rossYokes()[0]
@@ -328,16 +428,26 @@ func TestRossYokeForcesMisuse(t *testing.T) {
 	if n := testing.AllocsPerRun(10, func() { m.RossYokeForces(&l, 1.1, 100, -50) }); n != 0 {
 		t.Errorf("%v allocations", n)
 	}
+	if n := testing.AllocsPerRun(10, func() { m.RossYokeInertia(&l, 1.1, 0.1, 0.2, 100) }); n != 0 {
+		t.Errorf("inertia: %v allocations", n)
+	}
 	if n := testing.AllocsPerRun(10, func() { m.Check() }); n != 0 {
 		t.Errorf("check: %v allocations", n)
 	}
-	defer func() {
-		if recover() == nil {
-			t.Error("forces of a yoke in a rhombic drive")
-		}
-	}()
 	other := Mechanism{Kind: Rhombic, Rod: 0.06, Radius: 0.01, Eccentricity: 0.045}
-	other.RossYokeForces(&l, 0, 1, 1)
+	for what, f := range map[string]func(){
+		"forces":  func() { other.RossYokeForces(&l, 0, 1, 1) },
+		"inertia": func() { other.RossYokeInertia(&l, 0, 1, 1, 1) },
+	} {
+		func() {
+			defer func() {
+				if recover() == nil {
+					t.Errorf("%s of a yoke in a rhombic drive", what)
+				}
+			}()
+			f()
+		}()
+	}
 }
 
 func BenchmarkRossYoke(b *testing.B) {

@@ -35,7 +35,8 @@ type Rotor struct {
 }
 
 // PinAngle gives the angle at theta = 0 of the crank pin of a body, as Rotor counts it [rad]; lead is the phase for
-// the first body and 0 for the second. A counterweight opposite to the pin stands at PinAngle + pi.
+// the first body and 0 for the second. A counterweight opposite to the pin stands at PinAngle + pi. Not for a Ross
+// yoke, whose pin stands at -pi/2.
 func PinAngle(b *Body, lead float64) float64 { return b.Axis + math.Pi + lead }
 
 // Shaking gives the force by which the inertia of bodies and rotors shakes the frame, and its moment.
@@ -45,7 +46,8 @@ func PinAngle(b *Body, lead float64) float64 { return b.Axis + math.Pi + lead }
 //
 // at motion of both bodies, theta its crank angle [rad], omega [rad/s]. The couple is that about the plane of offset 0;
 // where the force is zero it is the same about every plane. The reaction to the torque turns the frame about the
-// shaft besides; it is the torque with its sign changed.
+// shaft besides; it is the torque with its sign changed. So it is where the axes of the cylinders meet the shaft: those
+// of a Ross yoke pass it on both sides, and the moment of the inertia forces about the shaft adds to it.
 //
 // Source: derived here.
 func Shaking(at *drive.Motion, theta float64, bodies *[2]Body, rotors []Rotor, omega float64) (force, couple Vector) {

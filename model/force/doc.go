@@ -13,8 +13,8 @@
 // direction at the angle phi, counted from y in the sense of rotation, is (-sin phi, cos phi). The axis of a
 // cylinder at the angle 0 stands upright. The crank pin of a body whose axis stands at the angle beta is at
 // beta + pi + theta + lead, for package drive has the crank at the bottom at theta + lead = 0; lead is the phase
-// for the first body and 0 for the second. (A Ross yoke has one pin, at theta from the x axis: package drive.) So both bodies of a V with the included angle of the phase, the second
-// cylinder ahead in the sense of rotation, may run on one pin.
+// for the first body and 0 for the second. So both bodies of a V with the included angle of the phase, the second
+// cylinder ahead in the sense of rotation, may run on one pin. A Ross yoke has one pin, at theta from the x axis.
 //
 // Samples over one turn come in slices: rising angles theta[k] [rad] over less than a turn and weights weight[k]
 // whose sum is 2 pi [rad], such that the sum of weight times value is the integral over a turn. They need not be

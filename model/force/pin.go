@@ -57,10 +57,10 @@ type Loads struct {
 }
 
 // Masses are what turns with a crank. The zero value is a drive whose rods have no mass and whose cranks balance
-// themselves.
+// themselves. The rods of a Ross yoke do not reach the crank: their shares go with the ends of its crossbar.
 type Masses struct {
-	Common        bool    // slider-crank, sinusoidal: both bodies run on one pin (strokes equal, the phase is the included angle)
-	Rod1          float64 // share of the first body's connecting rod that turns with its pin [kg]; of each of its rods in a rhombic drive
+	Common        bool    // slider-crank, sinusoidal: one pin for both bodies (strokes equal, phase the included angle)
+	Rod1          float64 // share of the first body's rod that goes with its crank pin [kg]; of each of its rods in a rhombic drive
 	Rod2          float64 // of the second body
 	Crank         float64 // rest of the unbalance of one crank, pin and web, mass times radius [kg m]
 	Counterweight float64 // opposite to the pin on one crank, mass times radius [kg m]
@@ -86,9 +86,10 @@ func Peaks(dst *Loads, m *drive.Mechanism, w *Masses, theta, P1, P2 []float64, o
 			continue
 		}
 		if m.Kind == drive.RossYoke {
-			var l drive.RossYokeLoad
+			var l, ends drive.RossYokeLoad
 			m.RossYokeForces(&l, at, P1[k], P2[k])
-			pin := RossYoke(&l, at).Add(Turning((w.Rod1+w.Rod2)*m.Radius, omega))
+			m.RossYokeInertia(&ends, at, w.Rod1, w.Rod2, omega)
+			pin := RossYoke(&l, at).Add(RossYoke(&ends, at))
 			dst.Rod1.take(math.Abs(l.Rod1), at)
 			dst.Rod2.take(math.Abs(l.Rod2), at)
 			dst.Side1.take(math.Abs(l.Side1), at)
