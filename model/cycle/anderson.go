@@ -34,6 +34,12 @@ func (m *mixing) reset(depth int) {
 	m.cycles = 0
 }
 
+// forget drops what was learnt of the map, and accelerates from the next cycle on.
+func (m *mixing) forget() {
+	m.reset(m.depth)
+	m.cycles = plainCycles
+}
+
 // restart keeps what was learnt of the map but takes no difference across a change of it.
 func (m *mixing) restart() { m.fresh = true }
 
@@ -154,7 +160,7 @@ func (s *Solver) weigh(f *[maxStates]float64) {
 		}
 		f[i] = 0
 		blow := 0.5 * s.cp[i] * s.sums.flowAbs[i]
-		f[s.n+i] = heatWeight * s.metalGain(i) / (blow * temperatureScale)
+		f[s.n+i] = heatWeight * s.gain[i] / (blow * temperatureScale)
 	}
 }
 

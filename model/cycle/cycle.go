@@ -58,8 +58,10 @@ func (s *Solver) run() bool {
 	for i := range s.n {
 		s.sums.wallMax[i], s.sums.wallMin[i] = s.wall[i], s.wall[i]
 	}
+	since := 0
 	for n := range move.Steps {
 		k := 2 * n
+		s.conduction(dt)
 		// First stage, at (n + gamma) dt.
 		for i := range s.n {
 			s.mass0[i], s.energy0[i] = s.mass[i], s.energy[i]
@@ -101,6 +103,15 @@ func (s *Solver) run() bool {
 				s.sums.wallMin[i] = min(s.sums.wallMin[i], w)
 			}
 		}
+		if s.tangent.follow {
+			if since++; since == s.tangent.stride || n == move.Steps-1 {
+				s.tangent.step(s, float64(since)*dt, move.DVe[k+1], move.DVc[k+1])
+				since = 0
+			}
+		}
+	}
+	for i := s.firstMatrix; i <= s.lastMatrix; i++ {
+		s.gain[i] = (s.wall[i] - s.wallStart[i]) * s.path.Cells[i].Capacity
 	}
 	return true
 }

@@ -13,15 +13,10 @@ func (s *Solver) profileSpread() float64 {
 		if s.kind[i] != Matrix {
 			continue
 		}
-		sum += s.metalGain(i)
+		sum += s.gain[i]
 		largest = max(largest, math.Abs(sum))
 	}
 	return largest
-}
-
-// metalGain is the energy that matrix cell i gained over the cycle [J].
-func (s *Solver) metalGain(i int) float64 {
-	return s.metalDrift[i]*s.path.Cells[i].Capacity*s.path.Period - s.sums.heat[i]
 }
 
 // moveMatrix shifts the mean matrix profile so that no cell gains energy over a cycle, and sets the
@@ -39,16 +34,8 @@ func (s *Solver) moveMatrix() {
 	if path.FixedRun {
 		return
 	}
-	first, last := -1, -1
-	for i := range s.n {
-		if s.kind[i] == Matrix {
-			if first < 0 {
-				first = i
-			}
-			last = i
-		}
-	}
-	if first < 0 {
+	first, last := s.firstMatrix, s.lastMatrix
+	if first > last {
 		return
 	}
 	// Thomas algorithm on  -L d(i-1) + D d(i) - R d(i+1) = G.
@@ -61,7 +48,7 @@ func (s *Solver) moveMatrix() {
 			right = returning * s.cp[last] * 0.5 * s.sums.flowAbs[last]
 		}
 		d := left + right
-		g := s.metalGain(i)
+		g := s.gain[i]
 		if i > first {
 			d -= left * s.elS[i-1]
 			g += left * s.elA[i-1]
@@ -95,7 +82,6 @@ func (s *Solver) moveMatrix() {
 		s.t[i] += next - s.wall[i]
 		s.wall[i] = next
 	}
-	s.setConduction(first, last)
 }
 
 // steeper is the slope of the moved mean profile between cells i and j over that of the old one: the
@@ -117,17 +103,18 @@ const maxShift = 60
 
 const returning = 0.7
 
-// setConduction works out the axial conduction between matrix cells at the mean profile.
-func (s *Solver) setConduction(first, last int) {
+// conduction works out the axial conduction between matrix cells over a step from their temperatures at its start.
+func (s *Solver) conduction(dt float64) {
+	if s.path.FixedRun {
+		return
+	}
 	in := 0.0
-	for i := first; i <= last; i++ {
+	for i := s.firstMatrix; i <= s.lastMatrix; i++ {
 		out := 0.0
-		if i < last {
-			a := s.sums.metal[i]/s.path.Period + s.shift[i]
-			b := s.sums.metal[i+1]/s.path.Period + s.shift[i+1]
-			out = s.conduct[i] * (a - b)
+		if i < s.lastMatrix {
+			out = s.conduct[i] * (s.wall[i] - s.wall[i+1])
 		}
-		s.axialFlow[i] = out
+		s.sums.axial[i] += dt * out
 		s.metalDrift[i] = (in - out) / s.path.Cells[i].Capacity
 		in = out
 	}

@@ -17,11 +17,12 @@ func hotter(p *Path, by float64) {
 	}
 }
 
-// TestResume: going on from the solution at another hot end ends where a start from rest does, in fewer
-// steps. Both stop within the tolerances of the periodic state, 2e-4 of the heat each.
+// TestResume: going on from the solution at another hot end ends where a start from rest does, in a quarter fewer
+// steps on the whole. Both stop within the tolerances of the periodic state, 2e-4 of the heat each.
 func TestResume(t *testing.T) {
 	fast := correlation.NewFast()
 	resumed, fresh := NewSolver(fast), NewSolver(fast)
+	resumedSteps, freshSteps := 0, 0
 	for _, m := range machines() {
 		for _, by := range []float64{-150, -20, 5, 80} {
 			var got, want Result
@@ -43,10 +44,11 @@ func TestResume(t *testing.T) {
 			if math.Abs(gw-ww) > 1e-3*wh || math.Abs(gh-wh) > 1e-3*wh {
 				t.Errorf("%s %+g K: work %.4f J, heat %.4f J; from rest %.4f, %.4f", m.name, by, gw, gh, ww, wh)
 			}
-			if got.Steps >= want.Steps {
-				t.Errorf("%s %+g K: %d steps, from rest %d", m.name, by, got.Steps, want.Steps)
-			}
+			resumedSteps, freshSteps = resumedSteps+got.Steps, freshSteps+want.Steps
 			t.Logf("%-16s %+4g K: %2d cycles, %4d steps; from rest %2d, %4d", m.name, by, got.Cycles, got.Steps, want.Cycles, want.Steps)
 		}
+	}
+	if resumedSteps*4 > freshSteps*3 {
+		t.Errorf("%d steps, from rest %d", resumedSteps, freshSteps)
 	}
 }

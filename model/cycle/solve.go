@@ -11,6 +11,8 @@ const (
 	tolPressure = 2e-4 // mean pressure over the one asked for, less one
 	tolWall     = 0.1  // change of a wall temperature between cycles [K]
 
+	slopeCycle = 2 // the cycle from rest that small changes are followed through; the one before is too far off
+
 	farMove = 30.0 // of the hot end, from which on a solution goes on over the coarse grid [K]
 )
 
@@ -45,33 +47,44 @@ type Settings struct {
 	MaxCycles int  // give up after this many
 	Newton    int  // Newton steps a stage
 	Depth     int  // of Anderson's method, 0 = plain repetition
+	Slopes    bool // follow small changes through a cycle for Newton's step on the state at its start
 	FineOnly  bool // leave out the coarse grid
 }
 
 // DefaultSettings are those of production runs.
-func DefaultSettings() Settings { return Settings{MaxCycles: 60, Newton: 1, Depth: 8} }
+func DefaultSettings() Settings { return Settings{MaxCycles: 60, Newton: 1, Depth: 8, Slopes: true} }
 
 // Solve finds the periodic state of the path and fills dst. dst.Converged says whether it was
 // reached; the rest of dst holds the last cycle all the same.
 //
-// A solution that leaves the physical range, or does not settle, is tried once more from the start with
-// more Newton steps and cycles, on the fine grid alone and with less acceleration.
+// A solution that leaves the physical range on the coarse grid is tried again from the start on the fine grid with one more
+// Newton step. One that does not settle is tried a last time with more Newton steps and cycles, without slopes and with less
+// acceleration.
 func (s *Solver) Solve(dst *Result, path *Path, set Settings) {
 	s.path = path
 	s.attempt(dst, path, set)
-	if dst.Converged {
-		return
+	if dst.Diverged && !set.FineOnly {
+		bolder := set
+		bolder.Newton, bolder.FineOnly = set.Newton+1, true
+		s.again(dst, path, bolder)
 	}
-	first := *dst
-	set.Newton, set.Depth, set.FineOnly, set.MaxCycles = set.Newton+2, min(set.Depth, 4), true, 2*set.MaxCycles
+	if !dst.Converged {
+		set.Newton, set.Depth, set.Slopes, set.FineOnly, set.MaxCycles = set.Newton+2, min(set.Depth, 4), false, true, 2*set.MaxCycles
+		s.again(dst, path, set)
+	}
+}
+
+// again is attempt with the cycles and steps of those before counted in.
+func (s *Solver) again(dst *Result, path *Path, set Settings) {
+	before := *dst
 	s.attempt(dst, path, set)
-	dst.Cycles += first.Cycles
-	dst.FineCycles += first.FineCycles
-	dst.Steps += first.Steps
+	dst.Cycles += before.Cycles
+	dst.FineCycles += before.FineCycles
+	dst.Steps += before.Steps
 }
 
 // Resume is Solve for the path of the last solution with the heater at another temperature behind its
-// walls: it starts from that solution, which is near. Geometry, gas, motion and cold end must be the same.
+// walls: it starts from that solution, which is near, and its slopes. Geometry, gas, motion and cold end must be the same.
 func (s *Solver) Resume(dst *Result, path *Path, set Settings) {
 	if !dst.Converged || path.Target > 0 {
 		s.Solve(dst, path, set)
@@ -127,6 +140,7 @@ func (s *Solver) attempt(dst *Result, path *Path, set Settings) {
 		s.move = &path.Coarse
 	}
 	s.begin(set)
+	s.tangent.drop()
 	s.cycles(dst, path, set, true)
 }
 
@@ -138,6 +152,10 @@ func (s *Solver) cycles(dst *Result, path *Path, set Settings, fromRest bool) {
 		s.transport(fromRest && cycle == 1)
 		s.conserved()
 		s.mixing.push(s)
+		if set.Slopes && fromRest && cycle == slopeCycle {
+			s.tangent.begin(s)
+			s.mixing.forget()
+		}
 		s.newton = set.Newton
 		if fromRest && cycle == 1 { // the first prediction is poor
 			s.newton += 2
@@ -157,9 +175,17 @@ func (s *Solver) cycles(dst *Result, path *Path, set Settings, fromRest bool) {
 		profile := s.profileSpread() / scale
 		mean := s.sums.pressure / path.Period
 
+		if s.tangent.follow {
+			s.tangent.end(s)
+		}
 		moved := s.moveWalls()
-		s.moveMatrix()
+		if !s.tangent.ready {
+			s.moveMatrix()
+		}
 		s.p *= path.Mean / mean
+		if s.tangent.ready {
+			s.tangent.move(s, &s.mixing.x)
+		}
 		if s.move == &path.Coarse {
 			// Go over to the fine grid once its own error outweighs what is left.
 			if (math.Abs(balance) < tolCoarse && profile < tolCoarse && moved < 10*tolWall) || cycle >= set.MaxCycles/3 {
@@ -216,8 +242,12 @@ func (s *Solver) begin(set Settings) {
 	s.lift = 0
 	n := s.n
 	hot, cold := 0.0, 0.0
+	s.firstMatrix, s.lastMatrix = n, -1
 	for i := range n {
 		c := &path.Cells[i]
+		if c.Kind == Matrix {
+			s.firstMatrix, s.lastMatrix = min(i, s.firstMatrix), i
+		}
 		s.kind[i], s.part[i] = c.Kind, c.Part
 		s.volume[i] = c.Volume
 		s.wall[i] = c.Wall
@@ -225,7 +255,7 @@ func (s *Solver) begin(set Settings) {
 		s.flow[i], s.flowOld[i] = 0, 0
 		s.dT[i] = 0
 		s.metalDrift[i] = 0
-		s.conduct[i], s.axialFlow[i] = 0, 0
+		s.conduct[i] = 0
 		if c.Kind == Tube {
 			if hot == 0 {
 				hot = c.Wall
@@ -276,8 +306,8 @@ func (s *Solver) conserved() {
 	}
 }
 
-// transport sets the film factors at the mean temperature of each cell over the last cycle; gas
-// viscosity and conductivity follow the temperature swing of a cell only in the mean.
+// transport sets the film factors at the mean temperature of each cell: that of the last cycle, moved as far as the state at
+// the start was moved since. Gas viscosity and conductivity follow the temperature swing of a cell only in the mean.
 func (s *Solver) transport(first bool) {
 	path := s.path
 	for i := range s.n {
@@ -287,8 +317,9 @@ func (s *Solver) transport(first bool) {
 		}
 		t := s.t[i]
 		if !first {
-			t = s.sums.temperature[i] / path.Period
+			t = s.sums.temperature[i]/path.Period + (t - s.tStart[i])
 		}
+		s.tStart[i] = s.t[i]
 		s.gas.At(&s.state, t, path.Mean)
 		mu, k := s.gas.Transport(t, 1/s.state.V)
 		s.viscosity[i] = mu
@@ -372,7 +403,7 @@ func (s *Solver) collect(dst *Result) {
 			dst.HeatIntoMatrix += s.sums.heatIn[i]
 			dst.Swing = max(dst.Swing, s.sums.wallMax[i]-s.sums.wallMin[i])
 			if s.faceKind[i] == faceMatrix {
-				dst.Conduction[i] = s.axialFlow[i] * path.Period
+				dst.Conduction[i] = s.sums.axial[i]
 			}
 		}
 		if s.kind[i] == Tube && s.part[i] == PartHeater {

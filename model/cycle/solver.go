@@ -13,10 +13,11 @@ type Solver struct {
 	path *Path
 	move *Motion // the grid in use
 
-	n        int
-	kind     [MaxCells]Kind
-	part     [MaxCells]Part
-	faceKind [MaxCells]faceKind
+	n                       int
+	firstMatrix, lastMatrix int // cells; first > last: none
+	kind                    [MaxCells]Kind
+	part                    [MaxCells]Part
+	faceKind                [MaxCells]faceKind
 
 	// State and prediction.
 	p       float64
@@ -53,12 +54,14 @@ type Solver struct {
 
 	conduct   [MaxCells]float64 // axial conductance between matrix cells i and i+1, solid, gas and dispersion [W/K]
 	wallStart [MaxCells]float64 // matrix temperature at the start of the cycle [K]
-	axialFlow [MaxCells]float64 // mean axial conduction between matrix cells i and i+1 [W]
+	tStart    [MaxCells]float64 // gas temperature at the start of the cycle [K]
+	gain      [MaxCells]float64 // energy that a matrix cell gained over the cycle [J]
 	shift     [MaxCells]float64 // last move of the mean matrix profile [K]
 
-	sums   sums
-	mixing mixing
-	newton int
+	sums    sums
+	mixing  mixing
+	tangent tangent
+	newton  int
 
 	Trace Trace
 }
@@ -73,6 +76,7 @@ type sums struct {
 	flowAbs          [MaxCells]float64 // integral |M| dt over the face [kg]
 	blow             [MaxCells]float64 // integral (cp M)^2/UA dt over the matrix face [J/K]
 	enthalpy         [MaxCells]float64 // integral of the enthalpy flow over the face [J]
+	axial            [MaxCells]float64 // axial conduction between matrix cells i and i+1 [J]
 	metal            [MaxCells]float64 // integral of the matrix temperature dt
 	wallMax, wallMin [MaxCells]float64 // of the matrix temperature [K]
 	heatIn           [MaxCells]float64 // from gas into the matrix while it warms it [J]
