@@ -16,11 +16,22 @@ type friction struct {
 	power                       [2 * cycle.MaxSteps]float64 // lost in all parts, at the same [W]
 }
 
-// section is a length of gas path with friction.
+// section is a length of gas path with friction. Its flow is the mean over two faces, its gas that of a cell.
 type section struct {
-	area, dh, length float64 // dh = 0: no wall friction
-	loss             float64 // loss coefficient on the dynamic pressure [-]
-	matrix           bool
+	a, b, cell int        // faces, cell
+	part       cycle.Part // where it is booked
+	share      float64    // of its part's length [-]
+
+	area   float64 // [m2]
+	loss   float64 // loss coefficient on the dynamic pressure [-]
+	hot    bool    // of a duct: on the hot side of the matrix
+	matrix bool
+	wall   bool    // has wall friction
+	re     float64 // Reynolds number over mass flow [s/kg]
+	viscid float64 // pressure drop over f Re times the velocity: mu L/(2 Dh^2) [Pa s/m]
+	volume float64 // of the cell [m3]; 0: a space, whose volume moves
+
+	power, reSum, fast float64 // lost [W times samples], sum of Re, largest speed [m/s]
 }
 
 // setFriction works out the pressure drops and the power they take from the flows of the last cycle.
@@ -29,63 +40,109 @@ type section struct {
 // theirs. The pressure used in the cycle is uniform, so the drop changes work but not the flow.
 func (w *Workspace) setFriction(e *Engine) {
 	fr, p := &w.friction, &w.Path
-	h, c := &e.Heater, &e.Cooler
 	*fr = friction{}
+	w.setSections(e)
+	sections := w.sections[:w.sectionCount]
+	weights := [2]float64{1 - cycle.Gamma, cycle.Gamma}
+	for k := range 2 * p.Fine.Steps {
+		drop, power := w.drops(sections, k, weights[k&1])
+		fr.drop[k], fr.power[k] = drop, power
+	}
+	for i := range sections {
+		cut := &sections[i]
+		power := cut.power / float64(p.Fine.Steps)
+		switch {
+		case cut.part == cycle.PartHeater:
+			fr.heater += power
+		case cut.part == cycle.PartRegenerator:
+			fr.regenerator += power
+		case cut.part == cycle.PartCooler:
+			fr.cooler += power
+		case cut.hot:
+			fr.hotDucts += power
+		default:
+			fr.coldDucts += power
+		}
+		fr.reMean[cut.part] += cut.reSum * cut.share / float64(p.Fine.Steps)
+		fr.mach = max(fr.mach, cut.fast/w.gas.SoundSpeed(w.Cycle.Temperature[cut.cell], p.Mean))
+	}
+}
+
+// setSections lists the ducts and the cells of tubes and matrix.
+func (w *Workspace) setSections(e *Engine) {
+	p := &w.Path
 	first, last := 0, 0 // matrix cells
 	for i := range p.N {
-		cell := &p.Cells[i]
-		cut := section{area: cell.Area, dh: cell.Dh}
-		switch {
-		case cell.Kind == cycle.Matrix:
+		if p.Cells[i].Kind == cycle.Matrix {
 			if first == 0 {
 				first = i
 			}
 			last = i
-			cut.matrix = true
-			cut.length = e.Regenerator.Length / float64(w.Grid.Regenerator)
-			fr.regenerator += w.drop(&cut, i-1, i, i, cell.Part, float64(w.Grid.Regenerator))
-		case cell.Kind == cycle.Tube && cell.Part == cycle.PartHeater:
-			n := float64(w.Grid.Heater)
-			cut.length, cut.loss = h.TubeLength/n, h.EndLoss/n
-			fr.heater += w.drop(&cut, i-1, i, i, cell.Part, n)
-		case cell.Kind == cycle.Tube:
-			n := float64(w.Grid.Cooler)
-			cut.length, cut.loss = c.TubeLength/n, c.EndLoss/n
-			fr.cooler += w.drop(&cut, i-1, i, i, cell.Part, n)
 		}
 	}
-	fr.hotDucts = w.ductDrop(&e.ExpansionDuct, 0, 0) + w.ductDrop(&e.HotDuct, first-1, first-1)
-	fr.coldDucts = w.ductDrop(&e.ColdDuct, last, last+1) + w.ductDrop(&e.CompressionDuct, p.N-2, p.N-1)
-}
-
-// ductDrop is drop for a duct at a face, its gas at the temperature of cell i.
-func (w *Workspace) ductDrop(d *Duct, face, i int) float64 {
-	if d.Area == 0 || d.Loss == 0 {
-		return 0
+	w.sectionCount = 0
+	duct := func(d *Duct, face, cell int) {
+		if d.Area > 0 && d.Loss > 0 {
+			w.addSection(section{a: face, b: face, cell: cell, part: cycle.PartDuct, area: d.Area, loss: d.Loss, hot: face < first})
+		}
 	}
-	return w.drop(&section{area: d.Area, loss: d.Loss}, face, face, i, cycle.PartDuct, 1)
+	duct(&e.ExpansionDuct, 0, 0)
+	duct(&e.HotDuct, first-1, first-1)
+	duct(&e.ColdDuct, last, last+1)
+	duct(&e.CompressionDuct, p.N-2, p.N-1)
+	wall := func(i int, length, loss, count float64) {
+		cell := &p.Cells[i]
+		t := w.Cycle.Temperature[i]
+		w.gas.At(&w.state, t, p.Mean)
+		mu, _ := w.gas.Transport(t, 1/w.state.V)
+		w.addSection(section{
+			a: i - 1, b: i, cell: i, part: cell.Part, share: 1 / count,
+			area: cell.Area, loss: loss / count, matrix: cell.Kind == cycle.Matrix, wall: true,
+			re: cell.Dh / (cell.Area * mu), viscid: 0.5 * mu * length / count / (cell.Dh * cell.Dh),
+		})
+	}
+	for i := range p.N {
+		switch cell := &p.Cells[i]; {
+		case cell.Kind == cycle.Matrix:
+			wall(i, e.Regenerator.Length, 0, float64(w.Grid.Regenerator))
+		case cell.Kind == cycle.Tube && cell.Part == cycle.PartHeater:
+			wall(i, e.Heater.TubeLength, e.Heater.EndLoss, float64(w.Grid.Heater))
+		case cell.Kind == cycle.Tube:
+			wall(i, e.Cooler.TubeLength, e.Cooler.EndLoss, float64(w.Grid.Cooler))
+		}
+	}
 }
 
-// drop adds the pressure drop of a section to the history of the cycle and returns the power it takes
-// [W]. The flow is the mean over the faces a and b, the gas that of cell i; the section is one of n
-// equal ones of its part.
-func (w *Workspace) drop(cut *section, a, b, i int, part cycle.Part, n float64) float64 {
+func (w *Workspace) addSection(cut section) {
+	if w.Path.Cells[cut.cell].Kind != cycle.Space {
+		cut.volume = w.Path.Cells[cut.cell].Volume
+	}
+	w.sections[w.sectionCount] = cut
+	w.sectionCount++
+}
+
+// drops gives the pressure drop from the expansion to the compression space at sample k [Pa] and the power it takes [W], and
+// adds to the sums of the sections with the given weight.
+func (w *Workspace) drops(sections []section, k int, weight float64) (drop, power float64) {
 	fr, p, tr := &w.friction, &w.Path, w.Trace()
-	t := w.Cycle.Temperature[i]
-	w.gas.At(&w.state, t, p.Mean)
-	mu, _ := w.gas.Transport(t, 1/w.state.V)
-	sound := w.gas.SoundSpeed(t, p.Mean)
-	weights := [2]float64{1 - cycle.Gamma, cycle.Gamma}
-	power, reSum, fast := 0.0, 0.0, 0.0
-	for k := range 2 * p.Fine.Steps {
-		flow := 0.5 * (tr.Flow[k][a] + tr.Flow[k][b])
-		w.gas.At(&w.state, tr.Temp[k][i], tr.Pressure[k])
-		v := w.state.V
+	flows, masses := &tr.Flow[k], &tr.Mass[k]
+	for i := range sections {
+		cut := &sections[i]
+		volume := cut.volume
+		switch {
+		case volume > 0:
+		case cut.cell == 0:
+			volume = p.Fine.Ve[k]
+		default:
+			volume = p.Fine.Vc[k]
+		}
+		flow := 0.5 * (flows[cut.a] + flows[cut.b])
+		v := volume / masses[cut.cell]
 		u := flow * v / cut.area
 		speed := math.Abs(u)
-		dp := 0.5 * cut.loss * u * speed / v
-		if cut.dh > 0 {
-			re := speed * cut.dh / (v * mu)
+		dp := 0.5 * cut.loss * flow / cut.area * speed
+		if cut.wall {
+			re := math.Abs(flow) * cut.re
 			// Darcy's f times Re stays finite at rest: f L/Dh rho u|u|/2 = (f Re) mu L/(2 Dh^2) u.
 			fre := 0.0
 			if cut.matrix {
@@ -93,16 +150,15 @@ func (w *Workspace) drop(cut *section, a, b, i int, part cycle.Part, n float64) 
 			} else {
 				fre = w.fast.TubeFrictionRe(re)
 			}
-			dp += 0.5 * fre * mu * cut.length / (cut.dh * cut.dh) * u
-			reSum += weights[k&1] * re
-			fr.reMax[part] = max(fr.reMax[part], re)
+			dp += fre * cut.viscid * u
+			cut.reSum += weight * re
+			fr.reMax[cut.part] = max(fr.reMax[cut.part], re)
 		}
-		power += weights[k&1] * dp * flow * v
-		fr.drop[k] += dp
-		fr.power[k] += dp * flow * v
-		fast = max(fast, speed)
+		lost := dp * flow * v
+		cut.power += weight * lost
+		cut.fast = max(cut.fast, speed)
+		drop += dp
+		power += lost
 	}
-	fr.mach = max(fr.mach, fast/sound)
-	fr.reMean[part] += reSum / (float64(p.Fine.Steps) * n)
-	return power / float64(p.Fine.Steps)
+	return drop, power
 }

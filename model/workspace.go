@@ -32,12 +32,14 @@ type Workspace struct {
 	solver *cycle.Solver
 	fast   *correlation.Fast
 
-	gas      gas.Gas
-	state    gas.State
-	geometry geometry
-	motion   motion
-	friction friction
-	source   source
+	gas          gas.Gas
+	state        gas.State
+	geometry     geometry
+	motion       motion
+	friction     friction
+	sections     [cycle.MaxCells + 4]section // sectionCount in use
+	sectionCount int
+	source       source
 
 	loads loads
 }

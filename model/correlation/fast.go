@@ -60,26 +60,43 @@ func (f *Fast) TubeFrictionRe(Re float64) float64 {
 	return Re * f.TubeFriction(Re)
 }
 
-// TubeNusselt is the fast form of TubeNusselt.
-func (f *Fast) TubeNusselt(Re, Pr, DoverL float64) float64 {
-	switch {
-	case Re <= LaminarLimit:
-		return f.laminar(Re, Pr, DoverL)
-	case Re >= TurbulentLimit:
-		return f.turbulent(f.petukhov.At(Re), Re, Pr, DoverL)
-	}
-	low := f.laminar(LaminarLimit, Pr, DoverL)
-	high := f.turbulent(f.frictionHigh, TurbulentLimit, Pr, DoverL)
-	return low + blend(Re)*(high-low)
+// TubeFilm is what TubeNusselt takes from Prandtl number and shape alone, worked out once.
+type TubeFilm struct {
+	graetz  float64 // Graetz number over Re [-]
+	prandtl float64
+	slope   float64 // 12.7 (Pr^(2/3) - 1)
+	entry   float64 // 1 + (D/L)^(2/3)
+	low     float64 // Nu at the laminar end of the blend
+	rise    float64 // from there to the turbulent end
 }
 
-func (f *Fast) laminar(Re, Pr, DoverL float64) float64 {
-	Gz := Re * Pr * DoverL
+// NewTubeFilm sets up TubeNusselt for a Prandtl number and a diameter over a length.
+func (f *Fast) NewTubeFilm(Pr, DoverL float64) TubeFilm {
+	t := TubeFilm{graetz: Pr * DoverL, prandtl: Pr, slope: 12.7 * (f.twoThirds.At(Pr) - 1), entry: 1 + f.twoThirds.At(DoverL)}
+	t.low = f.laminar(&t, LaminarLimit)
+	t.rise = t.turbulent(f.frictionHigh, TurbulentLimit) - t.low
+	return t
+}
+
+// TubeNusselt is the fast form of TubeNusselt.
+func (f *Fast) TubeNusselt(t *TubeFilm, Re float64) float64 {
+	switch {
+	case Re <= LaminarLimit:
+		return f.laminar(t, Re)
+	case Re >= TurbulentLimit:
+		return t.turbulent(f.petukhov.At(Re), Re)
+	}
+	return t.low + blend(Re)*t.rise
+}
+
+func (f *Fast) laminar(t *TubeFilm, Re float64) float64 {
+	Gz := Re * t.graetz
 	return hausen(Gz, f.twoThirds.At(Gz))
 }
 
-func (f *Fast) turbulent(friction, Re, Pr, DoverL float64) float64 {
-	return gnielinski(friction, Re, Pr, f.twoThirds.At(Pr), f.twoThirds.At(DoverL))
+func (t *TubeFilm) turbulent(friction, Re float64) float64 {
+	f8 := 0.125 * friction
+	return f8 * (Re - 1000) * t.prandtl * t.entry / (1 + t.slope*math.Sqrt(f8))
 }
 
 // MatrixFriction is the fast form of MatrixFriction.

@@ -108,6 +108,7 @@ func TestTubeTextbookValues(t *testing.T) {
 
 func TestTubeBlend(t *testing.T) {
 	fast := NewFast()
+	film := fast.NewTubeFilm(0.66, 0.05)
 	for _, c := range []struct {
 		what       string
 		f          func(Re float64) float64
@@ -119,7 +120,7 @@ func TestTubeBlend(t *testing.T) {
 		{"Nusselt long", func(Re float64) float64 { return TubeNusselt(Re, 0.7, 1e-3) }, 1e-12, 0, true},
 		{"Nusselt short", func(Re float64) float64 { return TubeNusselt(Re, 0.66, 0.05) }, 1e-12, 0, true},
 		{"fast friction", fast.TubeFriction, 1e-5, LaminarLimit, true},
-		{"fast Nusselt", func(Re float64) float64 { return fast.TubeNusselt(Re, 0.66, 0.05) }, 1e-5, 0, true},
+		{"fast Nusselt", func(Re float64) float64 { return fast.TubeNusselt(&film, Re) }, 1e-5, 0, true},
 	} {
 		for _, Re := range []float64{LaminarLimit, TurbulentLimit} {
 			below, above := c.f(Re*(1-1e-14)), c.f(Re*(1+1e-14))

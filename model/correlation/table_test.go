@@ -84,7 +84,8 @@ func TestFastAgainstExact(t *testing.T) {
 		note("tube f Re", fast.TubeFrictionRe(Re), TubeFrictionRe(Re))
 		for _, Pr := range []float64{0.5, 0.7, 7} {
 			for _, d := range []float64{0, 1e-4, 0.03, 0.9} {
-				note("tube Nu", fast.TubeNusselt(Re, Pr, d), TubeNusselt(Re, Pr, d))
+				film := fast.NewTubeFilm(Pr, d)
+				note("tube Nu", fast.TubeNusselt(&film, Re), TubeNusselt(Re, Pr, d))
 			}
 		}
 	})
@@ -98,8 +99,9 @@ func TestFastAgainstExact(t *testing.T) {
 	near(t, "matrix f Re at rest", fast.MatrixFrictionRe(&p, 0), 129, 1e-15)
 	near(t, "matrix Nu at rest", fast.MatrixNusselt(&p, 0, 0.7), ScreenNusselt(0, 0.7), 1e-15)
 	near(t, "matrix N at rest", fast.MatrixDispersion(&p, 0, 0.7), 0.73, 1e-15)
-	near(t, "tube Nu at rest", fast.TubeNusselt(0, 0.7, 0.01), 3.66, 1e-15)
-	if !math.IsNaN(fast.MatrixNusselt(&p, math.NaN(), 0.7)) || !math.IsNaN(fast.TubeNusselt(math.NaN(), 0.7, 0.1)) {
+	long, short := fast.NewTubeFilm(0.7, 0.01), fast.NewTubeFilm(0.7, 0.1)
+	near(t, "tube Nu at rest", fast.TubeNusselt(&long, 0), 3.66, 1e-15)
+	if !math.IsNaN(fast.MatrixNusselt(&p, math.NaN(), 0.7)) || !math.IsNaN(fast.TubeNusselt(&short, math.NaN())) {
 		t.Error("NaN hidden")
 	}
 }
@@ -108,8 +110,9 @@ func TestFastNoAllocation(t *testing.T) {
 	fast := NewFast()
 	p := NewPorous(WovenScreen, 0.7)
 	sum := 0.0
+	film := fast.NewTubeFilm(0.7, 0.01)
 	if n := testing.AllocsPerRun(10, func() {
-		sum += fast.TubeNusselt(1e4, 0.7, 0.01) + fast.MatrixNusselt(&p, 50, 0.7) + fast.MatrixFrictionRe(&p, 50)
+		sum += fast.TubeNusselt(&film, 1e4) + fast.MatrixNusselt(&p, 50, 0.7) + fast.MatrixFrictionRe(&p, 50)
 	}); n != 0 {
 		t.Errorf("%v allocations", n)
 	}
@@ -140,12 +143,14 @@ func BenchmarkTable(b *testing.B) {
 
 func BenchmarkTubeNusseltLaminar(b *testing.B) {
 	fast := NewFast()
-	benchmark(b, 1, 2300, func(x float64) float64 { return fast.TubeNusselt(x, 0.7, 0.01) })
+	film := fast.NewTubeFilm(0.7, 0.01)
+	benchmark(b, 1, 2300, func(x float64) float64 { return fast.TubeNusselt(&film, x) })
 }
 
 func BenchmarkTubeNusseltTurbulent(b *testing.B) {
 	fast := NewFast()
-	benchmark(b, 3000, 1e5, func(x float64) float64 { return fast.TubeNusselt(x, 0.7, 0.01) })
+	film := fast.NewTubeFilm(0.7, 0.01)
+	benchmark(b, 3000, 1e5, func(x float64) float64 { return fast.TubeNusselt(&film, x) })
 }
 
 func BenchmarkTubeFriction(b *testing.B) {

@@ -26,7 +26,7 @@ func (s *Solver) film(a float64) {
 		switch s.kind[i] {
 		case Tube:
 			if ua == 0 {
-				ua = s.filmScale[i] * s.fast.TubeNusselt(flow*s.reScale[i], s.prandtl[i], c.Slim)
+				ua = s.filmScale[i] * s.fast.TubeNusselt(&s.tubeFilm[i], flow*s.reScale[i])
 			}
 		case Matrix:
 			if ua == 0 {
@@ -74,7 +74,7 @@ func (s *Solver) run() bool {
 		if !s.newtonSteps(a, k) {
 			return false
 		}
-		s.rates(b, k)
+		s.rates(a, b, k)
 		s.films(dt)
 		// Second stage, at (n + 1) dt; it starts from the first stage's rates.
 		for i := range s.n {
@@ -91,9 +91,9 @@ func (s *Solver) run() bool {
 		if n == move.Steps-1 && !s.settle(a, k+1) {
 			return false
 		}
-		s.rates(a, k+1)
+		s.rates(a, a, k+1)
 		for i := range s.n {
-			s.mass[i] = s.mass0[i] + a*s.massRate[i]
+			s.mass[i] = s.Trace.Mass[k+1][i]
 			s.energy[i] = s.energy0[i] + a*s.energyRate[i]
 			if s.kind[i] == Matrix {
 				w := s.metal0[i] + a*(s.metalRate[i]-s.metalDrift[i])
@@ -154,12 +154,13 @@ func (s *Solver) films(dt float64) {
 	}
 }
 
-// rates works out the rates of mass, energy and matrix temperature at the stage just solved, adds
-// them with the weight w [s] to the integrals of the cycle and keeps the trace.
-func (s *Solver) rates(w float64, k int) {
+// rates works out the rates of mass, energy and matrix temperature at the stage just solved, which took the time a [s] from
+// what it starts from, adds them with the weight w [s] to the integrals of the cycle and keeps the trace.
+func (s *Solver) rates(a, w float64, k int) {
 	path := s.path
 	last := s.n - 1
 	p := s.p
+	mass := &s.Trace.Mass[k]
 	var flowIn, energyIn float64
 	for i := range s.n {
 		var flowOut, energyOut float64
@@ -171,6 +172,7 @@ func (s *Solver) rates(w float64, k int) {
 		}
 		q := s.uae[i] * (s.wall0[i] - s.t[i])
 		s.massRate[i] = flowIn - flowOut
+		mass[i] = s.mass0[i] + a*s.massRate[i]
 		s.energyRate[i] = energyIn - energyOut + q
 		s.sums.heat[i] += w * q
 		s.sums.temperature[i] += w * s.t[i]

@@ -38,6 +38,7 @@ func (s *Solver) moveMatrix() {
 	if first > last {
 		return
 	}
+	var part, ratio [MaxCells]float64
 	// Thomas algorithm on  -L d(i-1) + D d(i) - R d(i+1) = G.
 	left := returning * s.cp[first] * 0.5 * s.sums.flowAbs[first-1]
 	for i := first; i <= last; i++ {
@@ -50,20 +51,20 @@ func (s *Solver) moveMatrix() {
 		d := left + right
 		g := s.gain[i]
 		if i > first {
-			d -= left * s.elS[i-1]
-			g += left * s.elA[i-1]
+			d -= left * ratio[i-1]
+			g += left * part[i-1]
 		}
 		inv := 1 / d
-		s.elA[i] = g * inv
+		part[i] = g * inv
 		if i < last {
-			s.elS[i] = right * inv
+			ratio[i] = right * inv
 		}
 		left = right
 	}
 	for i := last; i >= first; i-- {
-		s.shift[i] = s.elA[i]
+		s.shift[i] = part[i]
 		if i < last {
-			s.shift[i] += s.elS[i] * s.shift[i+1]
+			s.shift[i] += ratio[i] * s.shift[i+1]
 		}
 	}
 	largest := 0.0

@@ -330,6 +330,9 @@ func (s *Solver) transport(first bool) {
 		s.filmScale[i] = k * c.Film / c.Dh
 		s.reScale[i] = c.Dh / (c.Area * mu)
 		s.prandtl[i] = s.state.Cp * mu / k
+		if s.kind[i] == Tube {
+			s.tubeFilm[i] = s.fast.NewTubeFilm(s.prandtl[i], c.Slim)
+		}
 		if s.kind[i] == Matrix && i+1 < s.n && s.kind[i+1] == Matrix {
 			re := 0.0
 			if !first {

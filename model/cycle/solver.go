@@ -41,8 +41,9 @@ type Solver struct {
 	m, h, cp, hp, mT, mp  [MaxCells]float64
 	hFace, cpFace         [MaxCells]float64
 	wLeft, wRight         [MaxCells]float64
-	elA, elB, elS         [MaxCells]float64
-	elA1, elB1, elS1      [MaxCells]float64
+	balance               [MaxCells]balance
+	flux                  [MaxCells]flux
+	reduced               [MaxCells]reduced
 	state                 gas.State
 	isobar                gas.Isobar
 
@@ -50,6 +51,7 @@ type Solver struct {
 	filmScale [MaxCells]float64 // k Film / Dh [W/K]
 	reScale   [MaxCells]float64 // Re over mass flow [s/kg]
 	prandtl   [MaxCells]float64
+	tubeFilm  [MaxCells]correlation.TubeFilm
 	viscosity [MaxCells]float64
 
 	conduct   [MaxCells]float64 // axial conductance between matrix cells i and i+1, solid, gas and dispersion [W/K]
@@ -87,6 +89,7 @@ type Trace struct {
 	Pressure [2 * MaxSteps]float64           // [Pa]
 	Flow     [2 * MaxSteps][MaxCells]float64 // [kg/s]
 	Temp     [2 * MaxSteps][MaxCells]float64 // gas [K]
+	Mass     [2 * MaxSteps][MaxCells]float64 // gas in a cell [kg]
 }
 
 // NewSolver makes a solver that reads the laws from fast.

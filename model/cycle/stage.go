@@ -14,10 +14,10 @@ import (
 //
 // The right-hand sides s.mass0, s.energy0 and s.metal0 hold what the stage starts from. Elimination
 // runs from both closed ends to a cell in the middle, two chains that the processor works on side by
-// side. With the cells of a chain eliminated, the flow into the next cell and the temperature before it
-// are linear in that cell's temperature and in the pressure,
+// side. With the cells of a chain eliminated, the flow into the next cell and the temperature change before it
+// are linear in that cell's change of temperature and in that of the pressure,
 //
-//	dM = A + B dp + S dT,   dT(before) = A1 + B1 dp + S1 dT,
+//	M = A + B dp + S dT,   dT(before) = A1 + B1 dp + S1 dT,
 //
 // and the two balances of the middle cell give its temperature and the pressure. Reports false when
 // the result is not physical.
@@ -27,105 +27,150 @@ func (s *Solver) stage(a, ve, dve, vc, dvc float64) bool {
 	s.volume[0], s.volume[n-1] = ve, vc
 	s.properties(p)
 	s.faces()
+	s.balances(a, dve, dvc)
 
 	mid := n / 2
-	left, right := chain{sign: 1}, chain{sign: -1}
-	dv := dve
-	for i := range mid {
-		s.eliminate(&left, i, i, a, dv)
-		if k := n - 1 - i; k > mid {
-			if i == 0 {
-				dv = dvc
-			}
-			s.eliminate(&right, k, k-1, a, dv)
-		}
-		dv = 0
-	}
-	if mid == n-1 {
-		dv = dvc
-	}
-	dT, dp := s.middle(&left, &right, mid, a, dv)
+	dT, dp := s.middle(mid)
 	if !(math.Abs(dp) < 0.9*p) {
 		return false
 	}
 	s.t[mid] += dT
 	s.dT[mid] = dT
-	ok := s.t[mid] > minTemperature && s.t[mid] < maxTemperature
+	low, high := s.t[mid], s.t[mid]
 	d := dT
 	for i := mid - 1; i >= 0; i-- {
-		s.flow[i] += s.elA[i] + s.elB[i]*dp + s.elS[i]*d
-		d = s.elA1[i] + s.elB1[i]*dp + s.elS1[i]*d
+		r := &s.reduced[i]
+		s.flow[i] = r.A + r.B*dp + r.S*d
+		d = r.A1 + r.B1*dp + r.S1*d
 		s.dT[i] = d
-		s.t[i] += d
-		ok = ok && s.t[i] > minTemperature && s.t[i] < maxTemperature
+		t := s.t[i] + d
+		s.t[i] = t
+		low, high = min(low, t), max(high, t)
 	}
 	d = dT
 	for i := mid + 1; i < n; i++ {
-		s.flow[i-1] -= s.elA[i] + s.elB[i]*dp + s.elS[i]*d
-		d = s.elA1[i] + s.elB1[i]*dp + s.elS1[i]*d
+		r := &s.reduced[i]
+		s.flow[i-1] = -(r.A + r.B*dp + r.S*d)
+		d = r.A1 + r.B1*dp + r.S1*d
 		s.dT[i] = d
-		s.t[i] += d
-		ok = ok && s.t[i] > minTemperature && s.t[i] < maxTemperature
+		t := s.t[i] + d
+		s.t[i] = t
+		low, high = min(low, t), max(high, t)
 	}
 	s.p = p + dp
-	return ok
+	return low > minTemperature && high < maxTemperature
 }
 
-// chain is where an elimination stands. Its flows count positive towards the middle.
-type chain struct {
-	sign       float64 // of its flows against those of s.flow
-	A, B, S    float64 // flow into the next cell
-	A1, B1, S1 float64 // temperature of the last cell
-	flow, h, c float64 // flow into the next cell, its enthalpy, and the flow times cp
-	wLast      float64 // weight of the last cell in the face's temperature
-	wNext      float64 // weight of the next
+// balance is what the balances of a cell hold without their neighbours, over the time a. With M the flows in and out,
+// hIn and hOut their enthalpies,
+//
+//	t dT + p dp = u + M(in) - M(out)
+//	x dT - v dp = z + (hIn - h) M(in) - (hOut - h) M(out) + changes of the faces' enthalpies
+type balance struct {
+	h       float64 // enthalpy of the gas [J/kg]
+	u, t, p float64 // of mass [kg/s, kg/(s K), kg/(s Pa)]
+	z, x, v float64 // of energy less h times mass [W, W/K, W/Pa]
 }
 
-// eliminate takes cell i, whose face towards the middle has the given index, into the chain. dv is the
-// rate of its volume [m3/s].
-func (s *Solver) eliminate(x *chain, i, face int, a, dv float64) {
-	m, h, vol := s.m[i], s.h[i], s.volume[i]
-	ua := s.uae[i]
-	flow, hOut := x.sign*s.flow[face], s.hFace[face]
-	c := flow * s.cpFace[face]
-	wThis, wNext := s.wLeft[face], s.wRight[face]
-	if x.sign < 0 {
-		wThis, wNext = wNext, wThis
+// flux is a face as the elimination needs it.
+type flux struct {
+	h           float64 // enthalpy of its gas [J/kg]
+	left, right float64 // flow times cp times the weight of the cell before and after it [W/K]
+}
+
+// reduced is an eliminated cell.
+type reduced struct {
+	A, B, S    float64 // flow out of it towards the middle
+	A1, B1, S1 float64 // its change of temperature
+}
+
+// balances fills s.balance and s.flux.
+func (s *Solver) balances(a, dve, dvc float64) {
+	n := s.n
+	inva := 1 / a
+	p := s.p
+	m, mT, mp, h, cp, hp := s.m[:n], s.mT[:n], s.mp[:n], s.h[:n], s.cp[:n], s.hp[:n]
+	mass0, energy0, volume, uae, wall0, t := s.mass0[:n], s.energy0[:n], s.volume[:n], s.uae[:n], s.wall0[:n], s.t[:n]
+	out := s.balance[:n]
+	for i := range out {
+		mass, cold := m[i]*inva, uae[i]
+		b := &out[i] // field by field: a literal would be copied
+		b.h = h[i]
+		b.u, b.t, b.p = mass0[i]*inva-mass, mT[i]*inva, mp[i]*inva
+		b.z = (energy0[i]-h[i]*mass0[i]+p*volume[i])*inva + cold*(wall0[i]-t[i])
+		b.x = mass*cp[i] + cold
+		b.v = volume[i]*inva - mass*hp[i]
 	}
-	inva := 1 / a
-	Rm := s.mass0[i] - m - a*(flow-x.flow)
-	Ru := s.energy0[i] - (m*h - s.p*vol) - a*(flow*hOut-x.flow*x.h-ua*(s.wall0[i]-s.t[i])+s.p*dv)
-	dhOut, dhIn := hOut-h, x.h-h
-	D := s.mT[i]*inva - x.S
-	e0 := Rm*inva + x.A
-	e1 := x.B - s.mp[i]*inva
-	cLast := x.c * x.wLast
-	X := m*s.cp[i] + a*(ua-dhOut*D-dhIn*x.S+c*wThis-x.c*x.wNext-cLast*x.S1)
-	Z := Ru - h*Rm + a*(dhIn*x.A-dhOut*e0+cLast*x.A1)
-	P := vol - m*s.hp[i] - a*dv + a*(dhIn*x.B-dhOut*e1+cLast*x.B1)
-	inv := 1 / X
-	x.A1, x.B1, x.S1 = Z*inv, P*inv, -a*c*wNext*inv
-	x.A, x.B, x.S = e0-D*x.A1, e1-D*x.B1, -D*x.S1
-	x.flow, x.h, x.c, x.wLast, x.wNext = flow, hOut, c, wThis, wNext
-	s.elA1[i], s.elB1[i], s.elS1[i] = x.A1, x.B1, x.S1
-	s.elA[i], s.elB[i], s.elS[i] = x.A, x.B, x.S
+	first, last := &out[0], &out[n-1]
+	first.z -= p * dve
+	first.v -= dve
+	last.z -= p * dvc
+	last.v -= dvc
+	faces := s.flux[:n]
+	flow, hFace, cpFace, wLeft, wRight := s.flow[:n], s.hFace[:n], s.cpFace[:n], s.wLeft[:n], s.wRight[:n]
+	for i := range faces {
+		c := flow[i] * cpFace[i]
+		f := &faces[i]
+		f.h, f.left, f.right = hFace[i], c*wLeft[i], c*wRight[i]
+	}
+	faces[n-1] = flux{}
 }
 
-// middle solves the two balances of cell i, into which both chains flow, for its change of temperature
-// and the change of pressure.
-func (s *Solver) middle(l, r *chain, i int, a, dv float64) (dT, dp float64) {
-	m, h, vol := s.m[i], s.h[i], s.volume[i]
-	ua := s.uae[i]
-	inva := 1 / a
-	Rm := s.mass0[i] - m + a*(l.flow+r.flow)
-	Ru := s.energy0[i] - (m*h - s.p*vol) + a*(l.flow*l.h+r.flow*r.h+ua*(s.wall0[i]-s.t[i])-s.p*dv)
-	dl, dr := l.h-h, r.h-h
-	cl, cr := l.c*l.wLast, r.c*r.wLast
-	X := m*s.cp[i] + a*(ua-dl*l.S-dr*r.S-l.c*l.wNext-r.c*r.wNext-cl*l.S1-cr*r.S1)
-	Z := Ru - h*Rm + a*(dl*l.A+dr*r.A+cl*l.A1+cr*r.A1)
-	P := vol - m*s.hp[i] - a*dv + a*(dl*l.B+dr*r.B+cl*l.B1+cr*r.B1)
-	D := s.mT[i]*inva - l.S - r.S
-	dp = (Rm*inva + l.A + r.A - D*Z/X) / (s.mp[i]*inva - l.B - r.B + D*P/X)
+// middle eliminates all cells but the given one, into which both chains flow, and solves its balances for its change of
+// temperature and the change of pressure.
+func (s *Solver) middle(mid int) (dT, dp float64) {
+	n := s.n
+	var lA, lB, lS, lA1, lB1, lS1 float64 // single numbers: the compiler keeps no structure of six in registers
+	var rA, rB, rS, rA1, rB1, rS1 float64
+	var lh, ll, lr float64 // the last face of the left chain
+	var rh, rl, rr float64 // and of the right one
+	i, k := 0, n-1
+	for ; k > mid; i, k = i+1, k-1 {
+		c, f := &s.balance[i], &s.flux[i]
+		D, e0, e1 := c.t-lS, c.u+lA, lB-c.p
+		in, out := lh-c.h, f.h-c.h
+		inv := 1 / ((c.x + f.left - lr) - (out*D + in*lS) - ll*lS1)
+		lA1 = ((c.z + ll*lA1) + (in*lA - out*e0)) * inv
+		lB1 = ((c.v + ll*lB1) + (in*lB - out*e1)) * inv
+		lS1 = -f.right * inv
+		lA, lB, lS = e0-D*lA1, e1-D*lB1, -D*lS1
+		lh, ll, lr = f.h, f.left, f.right
+		o := &s.reduced[i]
+		o.A, o.B, o.S, o.A1, o.B1, o.S1 = lA, lB, lS, lA1, lB1, lS1
+
+		// The same from the other end, where flows count against their sign.
+		c, f = &s.balance[k], &s.flux[k-1]
+		D, e0, e1 = c.t-rS, c.u+rA, rB-c.p
+		in, out = rh-c.h, f.h-c.h
+		inv = 1 / ((c.x - f.right + rl) - (out*D + in*rS) + rr*rS1)
+		rA1 = ((c.z - rr*rA1) + (in*rA - out*e0)) * inv
+		rB1 = ((c.v - rr*rB1) + (in*rB - out*e1)) * inv
+		rS1 = f.left * inv
+		rA, rB, rS = e0-D*rA1, e1-D*rB1, -D*rS1
+		rh, rl, rr = f.h, f.left, f.right
+		o = &s.reduced[k]
+		o.A, o.B, o.S, o.A1, o.B1, o.S1 = rA, rB, rS, rA1, rB1, rS1
+	}
+	if i < mid { // one more on the left when the number of cells is even
+		c, f := &s.balance[i], &s.flux[i]
+		D, e0, e1 := c.t-lS, c.u+lA, lB-c.p
+		in, out := lh-c.h, f.h-c.h
+		inv := 1 / ((c.x + f.left - lr) - (out*D + in*lS) - ll*lS1)
+		lA1 = ((c.z + ll*lA1) + (in*lA - out*e0)) * inv
+		lB1 = ((c.v + ll*lB1) + (in*lB - out*e1)) * inv
+		lS1 = -f.right * inv
+		lA, lB, lS = e0-D*lA1, e1-D*lB1, -D*lS1
+		lh, ll, lr = f.h, f.left, f.right
+		o := &s.reduced[i]
+		o.A, o.B, o.S, o.A1, o.B1, o.S1 = lA, lB, lS, lA1, lB1, lS1
+	}
+	c := &s.balance[mid]
+	il, ir := lh-c.h, rh-c.h
+	X := (c.x - lr + rl) - (il*lS + ir*rS) - (ll*lS1 - rr*rS1)
+	Z := c.z + (il*lA + ir*rA) + (ll*lA1 - rr*rA1)
+	P := c.v + (il*lB + ir*rB) + (ll*lB1 - rr*rB1)
+	D := c.t - lS - rS
+	dp = (c.u + lA + rA - D*Z/X) / (c.p - lB - rB + D*P/X)
 	return (Z + P*dp) / X, dp
 }
 

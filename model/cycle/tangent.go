@@ -141,6 +141,15 @@ func (g *tangent) warm(s *Solver, c, i int) {
 	g.u[at] = s.h[i]*s.mT[i] + s.m[i]*s.cp[i]
 }
 
+// chain is where an elimination of changes from the first cell on stands.
+type chain struct {
+	B, S   float64 // flow into the next cell
+	B1, S1 float64 // temperature of the last cell
+	h, c   float64 // enthalpy of the flow into the next cell, and the flow times cp
+	wLast  float64 // weight of the last cell in the face's temperature
+	wNext  float64 // weight of the next
+}
+
 // step takes the changes over the time a [s], at whose end is the stage just solved; dve and dvc are the rates of the spaces
 // there [m3/s]. It is the elimination of stage.go from one end, for many right-hand sides: with A, A1 the parts of a column,
 //
