@@ -20,7 +20,7 @@ func Evaluate(dst *Performance, e *Engine, c *Corrections, w *Workspace) {
 	}
 	if dst.Cause != None {
 		cause, cycles := dst.Cause, dst.Cycles
-		*dst = Performance{Cause: cause, Cycles: cycles, Steps: w.Grid.Steps}
+		*dst = Performance{Cause: cause, Cycles: cycles, Steps: w.Path.Fine.Steps}
 	}
 }
 
@@ -70,7 +70,16 @@ func (w *Workspace) run(dst *Performance, e *Engine, c *Corrections, hot float64
 	} else {
 		w.solver.Solve(&w.Cycle, &w.Path, w.Settings)
 	}
+	finest := min(w.steps(e)<<w.Grid.Doublings, cycle.MaxSteps)
+	for w.Cycle.Converged && !(w.Cycle.StepError <= stepError) && 2*w.Path.Fine.Steps <= finest {
+		w.fillMotion(&w.Path.Fine, e, 2*w.Path.Fine.Steps)
+		w.solver.Refine(&w.Cycle, &w.Path, w.Settings)
+	}
 	dst.Cycles += w.Cycle.Cycles
+	dst.Steps, dst.StepError = w.Path.Fine.Steps, w.Cycle.StepError
+	if math.IsNaN(dst.StepError) {
+		dst.StepError = 1
+	}
 	if w.Cycle.Diverged {
 		return Diverged
 	}

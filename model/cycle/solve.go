@@ -7,11 +7,12 @@ const (
 	tolBalance  = 2e-4 // heat from walls less work, over heat into the gas at the heater or four times the work, if less
 	tolProfile  = 5e-4 // largest difference of mean enthalpy flow between two sections of the matrix, over that heat
 	tolWork     = 2e-4 // change of work between cycles, over that heat or four times the work, if less
-	tolCoarse   = 2e-2 // balance and profile at which the coarse grid has done its part
+	tolCoarse   = 1e-2 // balance and profile at which the coarse grid has done its part
 	tolPressure = 2e-4 // mean pressure over the one asked for, less one
 	tolWall     = 0.1  // change of a wall temperature between cycles [K]
 
-	slopeCycle = 2 // the cycle from rest that small changes are followed through; the one before is too far off
+	leastWork  = 0.02 // share of the heat that the error of the work is held against when there is less work
+	slopeCycle = 2    // the cycle from rest that small changes are followed through; the one before is too far off
 
 	farMove = 30.0 // of the hot end, from which on a solution goes on over the coarse grid [K]
 )
@@ -21,6 +22,7 @@ type Result struct {
 	Cycles     int // all cycles run
 	FineCycles int // of these, on the fine grid
 	Steps      int // time steps of all cycles together
+	FineSteps  int // time steps of a cycle on the fine grid
 	Converged  bool
 	Diverged   bool
 
@@ -39,6 +41,7 @@ type Result struct {
 	HeatIntoMatrix                         float64           // heat stored by the matrix over a cycle [J]
 	Outer                                  float64           // temperature behind the heater walls [K]
 	Balance                                float64           // (heat from tube walls - work) / heater heat [-]
+	StepError                              float64           // estimated error of the work by the time step, over the work or a fiftieth of the heat [-]; NaN: no estimate
 	Profile                                float64           // spread of the mean energy flow through the matrix / heater heat [-]
 }
 
@@ -74,13 +77,40 @@ func (s *Solver) Solve(dst *Result, path *Path, set Settings) {
 	}
 }
 
+// Refine goes on from the last solution on a finer grid: path.Fine has since been filled with more steps. All else must be
+// the same. The work on both grids gives the error of the finer one.
+func (s *Solver) Refine(dst *Result, path *Path, set Settings) {
+	before := *dst
+	s.path = path
+	s.move = &path.Fine
+	s.mixing.restart()
+	s.cycles(dst, path, set, false)
+	dst.add(&before)
+	if !dst.Converged {
+		s.again(dst, path, set)
+	}
+	dst.StepError = s.stepError(dst, before.WorkExpansion+before.WorkCompression, before.FineSteps)
+}
+
+// stepError estimates the error of the work from that on a grid of fewer steps: it goes with the square of the step.
+func (s *Solver) stepError(r *Result, work float64, steps int) float64 {
+	n := float64(r.FineSteps) / float64(steps)
+	w := r.WorkExpansion + r.WorkCompression
+	return math.Abs(w-work) / (n*n - 1) / max(math.Abs(w), leastWork*math.Abs(s.heatOf(PartHeater)))
+}
+
+// add counts in what was done before.
+func (r *Result) add(before *Result) {
+	r.Cycles += before.Cycles
+	r.FineCycles += before.FineCycles
+	r.Steps += before.Steps
+}
+
 // again is attempt with the cycles and steps of those before counted in.
 func (s *Solver) again(dst *Result, path *Path, set Settings) {
 	before := *dst
 	s.attempt(dst, path, set)
-	dst.Cycles += before.Cycles
-	dst.FineCycles += before.FineCycles
-	dst.Steps += before.Steps
+	dst.add(&before)
 }
 
 // Resume is Solve for the path of the last solution with the heater at another temperature behind its
@@ -90,7 +120,7 @@ func (s *Solver) Resume(dst *Result, path *Path, set Settings) {
 		s.Solve(dst, path, set)
 		return
 	}
-	old := dst.Outer
+	old, known := dst.Outer, dst.StepError
 	s.path = path
 	s.move = &path.Fine
 	if moved := s.warm(old); moved > farMove && path.Coarse.Steps > 0 {
@@ -101,10 +131,10 @@ func (s *Solver) Resume(dst *Result, path *Path, set Settings) {
 	if !dst.Converged {
 		resumed := *dst
 		s.Solve(dst, path, set)
-		dst.Cycles += resumed.Cycles
-		dst.FineCycles += resumed.FineCycles
-		dst.Steps += resumed.Steps
+		dst.add(&resumed)
+		return
 	}
+	dst.StepError = known
 }
 
 // warm moves gas and metal with the hot end, each by its place between the temperature of the coldest wall
@@ -141,6 +171,7 @@ func (s *Solver) attempt(dst *Result, path *Path, set Settings) {
 	}
 	s.begin(set)
 	s.tangent.drop()
+	s.coarseWork = math.NaN()
 	s.cycles(dst, path, set, true)
 }
 
@@ -195,6 +226,7 @@ func (s *Solver) cycles(dst *Result, path *Path, set Settings, fromRest bool) {
 				s.mixing.mix(s)
 			}
 			lastWork = work
+			s.coarseWork = work
 			continue
 		}
 		// A machine of low efficiency needs the work to a smaller share of the heat.
@@ -206,6 +238,7 @@ func (s *Solver) cycles(dst *Result, path *Path, set Settings, fromRest bool) {
 		if done || cycle == set.MaxCycles {
 			dst.Cycles, dst.Converged, dst.Balance, dst.Profile = cycle, done, balance, profile
 			s.collect(dst)
+			dst.StepError = s.stepError(dst, s.coarseWork, path.Coarse.Steps)
 			return
 		}
 		s.mixing.mix(s)
@@ -386,6 +419,7 @@ func (s *Solver) moveWalls() float64 {
 // collect fills the result from the last cycle.
 func (s *Solver) collect(dst *Result) {
 	path := s.path
+	dst.FineSteps = path.Fine.Steps
 	n := s.n
 	dst.PressureMean = s.sums.pressure / path.Period
 	dst.PressureMax, dst.PressureMin = s.pressureRange()

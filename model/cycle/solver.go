@@ -65,6 +65,9 @@ type Solver struct {
 	tangent tangent
 	newton  int
 
+	before     [MaxCells]float64 // temperatures before a Newton step [K]
+	coarseWork float64           // of the last cycle on the coarse grid, NaN before one [J]
+
 	Trace Trace
 }
 
