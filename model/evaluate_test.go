@@ -1,6 +1,7 @@
 package model
 
 import (
+	"flag"
 	"math"
 	"math/rand/v2"
 	"reflect"
@@ -124,9 +125,13 @@ func TestEvaluateAllocs(t *testing.T) {
 	}
 }
 
+var gridDesigns = flag.Int("grid-designs", 14, "designs of each class in TestGridError")
+
 // TestGridError compares the production grid with one of eight times the cells and steps together, over
 // sensible designs of three classes. The median is held to the half per cent that is small against the
 // corrections; the worst designs have exchangers that hold more gas than the pistons move.
+//
+// More designs of each class: go test ./model -run GridError -v -grid-designs 67
 func TestGridError(t *testing.T) {
 	coarse := NewWorkspace()
 	fine := NewWorkspaceGrid(Grid{Heater: 12, Regenerator: 24, Cooler: 12, Steps: 240, CoarseSteps: 24})
@@ -135,7 +140,7 @@ func TestGridError(t *testing.T) {
 	for i := range classes() {
 		cl := classes()[i]
 		rng := rand.New(rand.NewPCG(7, uint64(i)))
-		for range 14 {
+		for range *gridDesigns {
 			e, p := drawSensible(rng, &cl, coarse)
 			var q Performance
 			Evaluate(&q, &e, &c, fine)
@@ -150,7 +155,7 @@ func TestGridError(t *testing.T) {
 	for name, errs := range map[string][]float64{"power": power, "efficiency": efficiency} {
 		slices.Sort(errs)
 		n := len(errs)
-		t.Logf("%s: median %.2f %%, 90 %% below %.2f %%, worst %.2f %%", name, 100*errs[n/2], 100*errs[n*9/10], 100*errs[n-1])
+		t.Logf("%s of %d designs: median %.2f %%, 90 %% below %.2f %%, worst %.2f %%", name, n, 100*errs[n/2], 100*errs[n*9/10], 100*errs[n-1])
 		if errs[n/2] > 0.005 {
 			t.Errorf("%s: median error %.2f %%", name, 100*errs[n/2])
 		}
