@@ -8,7 +8,7 @@ import (
 )
 
 // Version names the state of the physics: it changes whenever a result may change.
-const Version = "9"
+const Version = "10"
 
 // Grid is the resolution of the cycle solver.
 type Grid struct {

@@ -64,11 +64,10 @@ func (s *Solver) run() bool {
 		k := 2 * n
 		s.conduction(dt)
 		// First stage, at (n + gamma) dt.
-		for i := range s.n {
-			s.mass0[i], s.energy0[i] = s.mass[i], s.energy[i]
-			if s.kind[i] == Matrix {
-				s.metal0[i] = s.wall[i] + a*s.metalDrift[i]
-			}
+		copy(s.mass0[:s.n], s.mass[:s.n])
+		copy(s.energy0[:s.n], s.energy[:s.n])
+		for i := s.firstMatrix; i <= s.lastMatrix; i++ {
+			s.metal0[i] = s.wall[i] + a*s.metalDrift[i]
 		}
 		s.film(a)
 		copy(s.flowOld[:s.n], s.flow[:s.n])
@@ -83,13 +82,10 @@ func (s *Solver) run() bool {
 		s.films(dt)
 		s.p += (1 - Gamma) / Gamma * (s.p - start)
 		// Second stage, at (n + 1) dt; it starts from the first stage's rates.
-		for i := range s.n {
-			s.mass0[i] = s.mass[i] + b*s.massRate[i]
-			s.energy0[i] = s.energy[i] + b*s.energyRate[i]
-			if s.kind[i] == Matrix {
-				s.metal0[i] = s.wall[i] + b*s.metalRate[i] + a*s.metalDrift[i]
-				s.wall0[i] = s.metal0[i]
-			}
+		s.ahead(b)
+		for i := s.firstMatrix; i <= s.lastMatrix; i++ {
+			s.metal0[i] = s.wall[i] + b*s.metalRate[i] + a*s.metalDrift[i]
+			s.wall0[i] = s.metal0[i]
 		}
 		if !s.newtonSteps(a, k+1) {
 			return false
@@ -98,16 +94,16 @@ func (s *Solver) run() bool {
 			return false
 		}
 		s.rates(a, a, k+1)
+		copy(s.mass[:s.n], s.Trace.Mass[k+1][:s.n])
 		for i := range s.n {
-			s.mass[i] = s.Trace.Mass[k+1][i]
 			s.energy[i] = s.energy0[i] + a*s.energyRate[i]
-			if s.kind[i] == Matrix {
-				w := s.metal0[i] + a*(s.metalRate[i]-s.metalDrift[i])
-				s.wall[i] = w
-				s.sums.metal[i] += dt * w
-				s.sums.wallMax[i] = max(s.sums.wallMax[i], w)
-				s.sums.wallMin[i] = min(s.sums.wallMin[i], w)
-			}
+		}
+		for i := s.firstMatrix; i <= s.lastMatrix; i++ {
+			w := s.metal0[i] + a*(s.metalRate[i]-s.metalDrift[i])
+			s.wall[i] = w
+			s.sums.metal[i] += dt * w
+			s.sums.wallMax[i] = max(s.sums.wallMax[i], w)
+			s.sums.wallMin[i] = min(s.sums.wallMin[i], w)
 		}
 		if s.tangent.follow {
 			if since++; since == s.tangent.stride || n == move.Steps-1 {
@@ -120,6 +116,17 @@ func (s *Solver) run() bool {
 		s.gain[i] = (s.wall[i] - s.wallStart[i]) * s.path.Cells[i].Capacity
 	}
 	return true
+}
+
+// ahead sets what the second stage starts from, b [s] along the rates of the first.
+func (s *Solver) ahead(b float64) {
+	n := s.n
+	mass0, mass, massRate := s.mass0[:n], s.mass[:n], s.massRate[:n]
+	energy0, energy, energyRate := s.energy0[:n], s.energy[:n], s.energyRate[:n]
+	for i := range mass0 {
+		mass0[i] = mass[i] + b*massRate[i]
+		energy0[i] = energy[i] + b*energyRate[i]
+	}
 }
 
 // settle repeats the Newton step at the end of a cycle until temperatures and pressure agree with the
@@ -157,62 +164,58 @@ const stageRetries = 3
 
 // films adds to the integrals of the cycle that only describe it and steer the iteration, once a step.
 func (s *Solver) films(dt float64) {
-	flowIn := 0.0
-	for i := range s.n {
-		flowOut := 0.0
-		if i < s.n-1 {
-			flowOut = s.flow[i]
-			s.sums.flowAbs[i] += dt * math.Abs(flowOut)
-		}
-		s.sums.film[i] += dt * s.ua[i]
-		if s.kind[i] == Matrix {
-			c := s.cp[i] * 0.5 * (flowIn + flowOut)
-			s.sums.blow[i] += dt * c * c / s.ua[i]
-		}
-		flowIn = flowOut
+	n := s.n
+	flow, ua, flowAbs, film := s.flow[:n], s.ua[:n], s.sums.flowAbs[:n], s.sums.film[:n]
+	for i := range flow {
+		flowAbs[i] += dt * math.Abs(flow[i])
+		film[i] += dt * ua[i]
+	}
+	for i := s.firstMatrix; i <= s.lastMatrix; i++ {
+		c := s.cp[i] * 0.5 * (s.flow[i-1] + s.flow[i])
+		s.sums.blow[i] += dt * c * c / s.ua[i]
 	}
 }
 
 // rates works out the rates of mass, energy and matrix temperature at the stage just solved, which took the time a [s] from
 // what it starts from, adds them with the weight w [s] to the integrals of the cycle and keeps the trace.
 func (s *Solver) rates(a, w float64, k int) {
-	path := s.path
-	last := s.n - 1
+	n := s.n
 	p := s.p
-	mass := &s.Trace.Mass[k]
+	tr := &s.Trace
+	flow, hFace, cpFace, wLeft, wRight := s.flow[:n], s.hFace[:n], s.cpFace[:n], s.wLeft[:n], s.wRight[:n]
+	t, dT, uae, wall0, mass0 := s.t[:n], s.dT[:n+1], s.uae[:n], s.wall0[:n], s.mass0[:n]
+	massRate, energyRate, warmth := s.massRate[:n], s.energyRate[:n], s.warmth[:n]
+	heat, temperature, enthalpy := s.sums.heat[:n], s.sums.temperature[:n], s.sums.enthalpy[:n]
+	mass, flows, temps := tr.Mass[k][:n], tr.Flow[k][:n], tr.Temp[k][:n]
 	var flowIn, energyIn float64
-	for i := range s.n {
-		var flowOut, energyOut float64
-		if i < last {
-			flowOut = s.flow[i]
-			rise := s.wLeft[i]*s.dT[i] + s.wRight[i]*s.dT[i+1]
-			energyOut = flowOut * (s.hFace[i] + s.cpFace[i]*rise)
-			s.sums.enthalpy[i] += w * energyOut
-		}
-		q := s.uae[i] * (s.wall0[i] - s.t[i])
-		s.massRate[i] = flowIn - flowOut
-		mass[i] = s.mass0[i] + a*s.massRate[i]
-		s.energyRate[i] = energyIn - energyOut + q
-		s.sums.heat[i] += w * q
-		s.sums.temperature[i] += w * s.t[i]
-		if s.kind[i] == Matrix {
-			s.metalRate[i] = s.metalDrift[i]
-			if !path.FixedRun {
-				s.metalRate[i] -= q / path.Cells[i].Capacity
-			}
-			if q < 0 {
-				s.sums.heatIn[i] -= w * q
-			}
-		}
+	for i := range flow { // the face behind the last cell has no flow
+		flowOut := flow[i]
+		energyOut := flowOut * (hFace[i] + cpFace[i]*(wLeft[i]*dT[i]+wRight[i]*dT[i+1]))
+		q := uae[i] * (wall0[i] - t[i])
+		rate := flowIn - flowOut
+		massRate[i] = rate
+		mass[i] = mass0[i] + a*rate
+		energyRate[i] = energyIn - energyOut + q
+		warmth[i] = q
+		enthalpy[i] += w * energyOut
+		heat[i] += w * q
+		temperature[i] += w * t[i]
+		flows[i], temps[i] = flowOut, t[i]
 		flowIn, energyIn = flowOut, energyOut
 	}
+	for i := s.firstMatrix; i <= s.lastMatrix; i++ {
+		q := s.warmth[i]
+		s.metalRate[i] = s.metalDrift[i] - q*s.perCapacity[i]
+		if q < 0 {
+			s.sums.heatIn[i] -= w * q
+		}
+	}
+	last := n - 1
 	we, wc := p*s.move.DVe[k], p*s.move.DVc[k]
 	s.energyRate[0] -= we
 	s.energyRate[last] -= wc
 	s.sums.work[0] += w * we
 	s.sums.work[1] += w * wc
 	s.sums.pressure += w * p
-	s.Trace.Pressure[k] = p
-	copy(s.Trace.Flow[k][:s.n], s.flow[:s.n])
-	copy(s.Trace.Temp[k][:s.n], s.t[:s.n])
+	tr.Pressure[k] = p
 }

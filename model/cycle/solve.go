@@ -280,6 +280,10 @@ func (s *Solver) begin(set Settings) {
 		c := &path.Cells[i]
 		if c.Kind == Matrix {
 			s.firstMatrix, s.lastMatrix = min(i, s.firstMatrix), i
+			s.perCapacity[i] = 1 / c.Capacity
+			if path.FixedRun {
+				s.perCapacity[i] = 0
+			}
 		}
 		s.kind[i], s.part[i] = c.Kind, c.Part
 		s.volume[i] = c.Volume
@@ -301,6 +305,8 @@ func (s *Solver) begin(set Settings) {
 			s.wLeft[i], s.wRight[i] = 0.5, 0.5
 		}
 	}
+	s.dT[n] = 0 // there is no face behind the last cell: its flow is zero, and what it is multiplied by must be a number
+	s.hFace[n-1], s.cpFace[n-1], s.wLeft[n-1], s.wRight[n-1] = 0, 0, 0, 0
 	if path.Cells[0].FixedFilm == 0 {
 		s.t[0] = hot
 		s.t[n-1] = cold

@@ -21,12 +21,12 @@ type Solver struct {
 
 	// State and prediction.
 	p       float64
-	t       [MaxCells]float64 // gas temperature [K]
-	dT      [MaxCells]float64 // its change in the last Newton step [K]
-	flow    [MaxCells]float64 // mass flow over face i|i+1, positive towards the compression space [kg/s]
-	flowOld [MaxCells]float64 // flow at the start of the last step [kg/s]
-	wall    [MaxCells]float64 // wall or matrix temperature [K]
-	lift    float64           // of the temperature behind the heater walls, to meet Path.Target [K]
+	t       [MaxCells]float64     // gas temperature [K]
+	dT      [MaxCells + 1]float64 // its change in the last Newton step [K]
+	flow    [MaxCells]float64     // mass flow over face i|i+1, positive towards the compression space [kg/s]
+	flowOld [MaxCells]float64     // flow at the start of the last step [kg/s]
+	wall    [MaxCells]float64     // wall or matrix temperature [K]
+	lift    float64               // of the temperature behind the heater walls, to meet Path.Target [K]
 
 	// Conserved quantities at the start of the step, and what the running stage starts from.
 	mass, energy          [MaxCells]float64 // [kg], [J]
@@ -37,6 +37,8 @@ type Solver struct {
 	ua                    [MaxCells]float64 // film conductance [W/K]
 	massRate, energyRate  [MaxCells]float64 // of the first stage
 	metalRate, metalDrift [MaxCells]float64 // of the matrix temperature, and the part of it by axial conduction [K/s]
+	warmth                [MaxCells]float64 // heat from the wall into the gas at the stage [W]
+	perCapacity           [MaxCells]float64 // 1/Capacity of a matrix cell, 0 where the matrix is held [K/J]
 	volume                [MaxCells]float64
 	m, h, cp, hp, mT, mp  [MaxCells]float64
 	hFace, cpFace         [MaxCells]float64
