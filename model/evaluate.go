@@ -62,7 +62,8 @@ func (w *Workspace) evaluate(dst *Performance, e *Engine, c *Corrections) Cause 
 }
 
 // run solves the cycle with the hot end at a temperature [K] and draws up its ledger. near says that the last
-// solution was of the same design at another temperature.
+// solution was of the same design at another temperature. Where the step of time costs the power more than stepError the
+// steps are doubled.
 func (w *Workspace) run(dst *Performance, e *Engine, c *Corrections, hot float64, near bool) Cause {
 	w.setPath(e, hot)
 	if near {
@@ -70,16 +71,21 @@ func (w *Workspace) run(dst *Performance, e *Engine, c *Corrections, hot float64
 	} else {
 		w.solver.Solve(&w.Cycle, &w.Path, w.Settings)
 	}
+	cause := w.book(dst, e, c)
 	finest := min(w.steps(e)<<w.Grid.Doublings, cycle.MaxSteps)
-	for w.Cycle.Converged && !(w.Cycle.StepError <= stepError) && 2*w.Path.Fine.Steps <= finest {
+	for w.Cycle.Converged && dst.StepError > stepError && 2*w.Path.Fine.Steps <= finest {
 		w.fillMotion(&w.Path.Fine, e, 2*w.Path.Fine.Steps)
 		w.solver.Refine(&w.Cycle, &w.Path, w.Settings)
+		cause = w.book(dst, e, c)
 	}
 	dst.Cycles += w.Cycle.Cycles
-	dst.Steps, dst.StepError = w.Path.Fine.Steps, w.Cycle.StepError
-	if math.IsNaN(dst.StepError) {
-		dst.StepError = 1
-	}
+	dst.Steps = w.Path.Fine.Steps
+	return cause
+}
+
+// book draws up the ledger of the cycle just solved.
+func (w *Workspace) book(dst *Performance, e *Engine, c *Corrections) Cause {
+	dst.StepError = 0
 	if w.Cycle.Diverged {
 		return Diverged
 	}
@@ -91,10 +97,21 @@ func (w *Workspace) run(dst *Performance, e *Engine, c *Corrections, hot float64
 		return BufferTooSmall
 	}
 	w.setPerformance(dst, e, c)
+	dst.StepError = w.stepError(dst)
 	if heater := w.heat(cycle.PartHeater) * e.circuits() * e.Speed; heater <= 0 || dst.HeatIn < leastHeat*heater {
 		return NoHeat
 	}
 	return None
+}
+
+// stepError is the estimated error of the power by the step of time: that of the cycle's work, larger as the power is less
+// than it, up to five times. 1 without an estimate.
+func (w *Workspace) stepError(dst *Performance) float64 {
+	work := w.Cycle.StepError
+	if math.IsNaN(work) {
+		return 1
+	}
+	return work * min(5, max(1, math.Abs(dst.PVPower/dst.BrakePower)))
 }
 
 // leastHeat is the share of the heat given to the gas in the heater that must come from outside. Below it

@@ -15,10 +15,10 @@ type Grid struct {
 	Heater, Regenerator, Cooler int // cells
 	Steps                       int // time steps a cycle
 	CoarseSteps                 int // time steps of the first cycles, which only approach the periodic state; 0 = none
-	Doublings                   int // how often the time steps may be doubled where their estimated error is above stepError
+	Doublings                   int // how often the time steps may be doubled where the estimated error of the power is above stepError
 }
 
-// stepError is the estimated error of the work by the time step above which the steps are doubled [-].
+// stepError is the estimated error of the power by the time step above which the steps are doubled [-].
 const stepError = 0.005
 
 // ProductionGrid is the grid every command uses; its error against finer grids is tested.
