@@ -67,6 +67,7 @@ func Outputs() []Output {
 		outcome("expansion_temperature", "time-mean gas temperature in the expansion space", Temperature, "degC", func(p *p) *float64 { return &p.ExpansionTemperature }),
 		outcome("compression_temperature", "time-mean gas temperature in the compression space", Temperature, "degC", func(p *p) *float64 { return &p.CompressionTemperature }),
 		outcome("energy_residual", "heat in less shaft work, coolant heat and losses to the surroundings, over heat in", Number, "-", func(p *p) *float64 { return &p.EnergyResidual }),
+		outcome("step_error", "estimated error of the power by the time step of the cycle, over the power", Number, "-", func(p *p) *float64 { return &p.StepError }),
 
 		outcome("swept_volume", "largest less smallest volume of the working space", Volume, "cm3", func(p *p) *float64 { return &p.SweptVolume }),
 		outcome("dead_volume", "gas path outside the swept volumes of both spaces", Volume, "cm3", func(p *p) *float64 { return &p.DeadVolume }),
