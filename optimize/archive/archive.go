@@ -18,7 +18,7 @@ const (
 	lockName = "archive.lock"
 
 	// layout is the version of the tables, kept in the file's user_version.
-	layout = 1
+	layout = 2
 	// applicationID marks a file as an archive of this program: "hotf".
 	applicationID = 0x686f7466
 )
@@ -30,6 +30,12 @@ type Archive struct {
 	db   *sql.DB
 	lock *lock // nil when read only
 	meta Meta
+
+	// For Record alone.
+	stored        int // designs
+	insertBatch   *sql.Stmt
+	insertResults *sql.Stmt
+	room          []byte
 }
 
 // Open takes up the run in a folder or begins one, and locks the folder until Close. A run that is there
@@ -64,7 +70,11 @@ func openLocked(dir string, m Meta) (*Archive, error) {
 	if err != nil {
 		return nil, err
 	}
-	fresh, err := a.check()
+	fresh, err := a.check() // before anything that changes the file
+	if err == nil {
+		_, err = a.db.Exec("PRAGMA journal_mode = WAL")
+		err = explain("open", file, err)
+	}
 	if err == nil && fresh {
 		err = a.create(&m)
 	} else if err == nil {
@@ -73,6 +83,9 @@ func openLocked(dir string, m Meta) (*Archive, error) {
 				err = &MismatchError{Dir: dir, Differences: d}
 			}
 		}
+	}
+	if err == nil {
+		err = a.prepare()
 	}
 	if err != nil {
 		return nil, errors.Join(err, a.db.Close())
@@ -171,7 +184,7 @@ func connect(dir, mode string) (*Archive, error) {
 	}
 	query := "mode=" + mode + "&_txlock=immediate&_pragma=busy_timeout(10000)"
 	if mode == "rwc" {
-		query += "&_pragma=journal_mode(WAL)&_pragma=synchronous(FULL)"
+		query += "&_pragma=synchronous(FULL)"
 	} else {
 		query += "&_pragma=query_only(1)"
 	}
@@ -203,8 +216,19 @@ func (a *Archive) check() (fresh bool, err error) {
 		return false, &DamagedError{File: a.file, What: "a database of something else"}
 	case version > layout:
 		return false, fmt.Errorf("%w: %s has layout %d, this program knows %d", ErrNewer, a.file, version, layout)
+	case version < layout:
+		return false, &OlderError{File: a.file, Program: a.writer()}
 	}
 	return false, nil
+}
+
+// writer is the version of the program that began the run, as far as the file tells.
+func (a *Archive) writer() string {
+	var version string
+	if a.db.QueryRow("SELECT value FROM meta WHERE key = 'program'").Scan(&version) != nil {
+		return "" // the message does without it
+	}
+	return version
 }
 
 // create makes the tables and writes what the run is, all or nothing.
@@ -215,13 +239,15 @@ func (a *Archive) create(m *Meta) error {
 	}
 	for _, statement := range []string{
 		"CREATE TABLE meta (key TEXT PRIMARY KEY, value TEXT NOT NULL) WITHOUT ROWID",
-		`CREATE TABLE designs (
-			seq   INTEGER PRIMARY KEY, -- number of the design, from 0 without a gap
-			x     BLOB NOT NULL,       -- little-endian float64; empty: all zero
-			f     BLOB NOT NULL,
-			g     BLOB NOT NULL,
-			extra BLOB NOT NULL,
-			cause TEXT NOT NULL,       -- empty: a result
+		`CREATE TABLE batches (
+			first INTEGER PRIMARY KEY, -- number of the first design, from 0 without a gap
+			count INTEGER NOT NULL,    -- designs in the row
+			data  BLOB NOT NULL,       -- flags, x, f and g (little-endian float64), causes
+			sum   INTEGER NOT NULL     -- CRC-32C of the row
+		)`,
+		`CREATE TABLE results (
+			first INTEGER PRIMARY KEY, -- as in batches
+			data  BLOB NOT NULL,       -- little-endian float64
 			sum   INTEGER NOT NULL     -- CRC-32C of the row
 		)`,
 		fmt.Sprintf("PRAGMA application_id = %d", applicationID),

@@ -2,6 +2,7 @@ package archive
 
 import (
 	"bytes"
+	"database/sql"
 	"errors"
 	"fmt"
 	"math"
@@ -18,7 +19,9 @@ func changed(t *testing.T, statement string) string {
 	t.Helper()
 	dir := t.TempDir()
 	a := open(t, dir)
-	record(t, a, 0, 20)
+	for first := 0; first < 20; first += 4 {
+		record(t, a, first, 4)
+	}
 	if _, err := a.db.Exec(statement); err != nil {
 		t.Fatal(err)
 	}
@@ -42,14 +45,20 @@ func readAll(dir string) error {
 // that says what is wrong, of Read and Each as of Open and Recall.
 func TestWhatIsWrongIsNamed(t *testing.T) {
 	for _, c := range []struct{ statement, want string }{
-		{"DELETE FROM designs WHERE seq = 7", "design 7 is missing"},
-		{"UPDATE designs SET x = f WHERE seq = 6", "design 6 is not what was written"},
-		{"UPDATE designs SET f = x'00' WHERE seq = 5", "design 5 is not what was written"},
-		{"UPDATE designs SET extra = x'' WHERE seq = 4", "design 4 is not what was written"},
-		{"UPDATE designs SET cause = 'none' WHERE seq = 8", "design 8 is not what was written"},
-		{"UPDATE designs SET sum = sum + 1 WHERE seq = 9", "design 9 is not what was written"},
-		{"UPDATE designs SET sum = 'many' WHERE seq = 10", "design 10 cannot be read"},
-		{"UPDATE designs SET seq = 30 WHERE seq = 19", "design 19 is missing"},
+		{"DELETE FROM batches WHERE first = 4", "design 4 is missing"},
+		{"DELETE FROM batches WHERE first = 0", "design 0 is missing"},
+		{"DELETE FROM results WHERE first = 8", "results of the designs from 8 on are missing"},
+		{"UPDATE batches SET data = (SELECT data FROM batches WHERE first = 0) WHERE first = 8", "designs from 8 on is not what was written"},
+		{"UPDATE batches SET data = x'00' WHERE first = 12", "designs from 12 on is not what was written"},
+		{"UPDATE results SET data = x'' WHERE first = 4", "designs from 4 on is not what was written"},
+		{"UPDATE results SET data = (SELECT data FROM results WHERE first = 0) WHERE first = 8", "designs from 8 on is not what was written"},
+		{"UPDATE results SET sum = sum + 1 WHERE first = 8", "designs from 8 on is not what was written"},
+		{"UPDATE results SET sum = 'many' WHERE first = 8", "designs from 8 on cannot be read"},
+		{"UPDATE batches SET count = 3 WHERE first = 8", "designs from 8 on is not what was written"},
+		{"UPDATE batches SET data = replace(CAST(data AS TEXT), 'cause', 'cruse') WHERE first = 8", "designs from 8 on is not what was written"},
+		{"UPDATE batches SET sum = sum + 1 WHERE first = 4", "designs from 4 on is not what was written"},
+		{"UPDATE batches SET sum = 'many' WHERE first = 12", "designs from 12 on cannot be read"},
+		{"UPDATE batches SET first = 30 WHERE first = 16", "from 30 on is not what was written"},
 		{"DELETE FROM meta WHERE key = 'driver'", "no driver"},
 		{"UPDATE meta SET value = '-1' WHERE key = 'seed'", `seed is "-1"`},
 		{"UPDATE meta SET value = '' WHERE key = 'aims'", `aims is ""`},
@@ -80,9 +89,67 @@ func TestNewerLayoutIsRefused(t *testing.T) {
 		t.Errorf("read: %v", err)
 	}
 	for range 2 { // the second shows that the first let the lock go
-		if _, err := Open(dir, meta()); !errors.Is(err, ErrNewer) || !strings.Contains(err.Error(), "layout 2") {
+		if _, err := Open(dir, meta()); !errors.Is(err, ErrNewer) || !strings.Contains(err.Error(), "layout 3") {
 			t.Errorf("open: %v", err)
 		}
+	}
+}
+
+// TestOlderLayoutIsRefused: a run folder of layout 1, made here as versions up to then made it, is neither
+// taken up nor read nor changed. The error says what to do, and its way to the study works.
+func TestOlderLayoutIsRefused(t *testing.T) {
+	dir := t.TempDir()
+	db, err := sql.Open("sqlite", filepath.Join(dir, FileName))
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, statement := range []string{
+		"CREATE TABLE meta (key TEXT PRIMARY KEY, value TEXT NOT NULL) WITHOUT ROWID",
+		"INSERT INTO meta VALUES ('study', 'study: old'), ('program', '0.9')",
+		`CREATE TABLE designs (seq INTEGER PRIMARY KEY, x BLOB NOT NULL, f BLOB NOT NULL, g BLOB NOT NULL, extra BLOB NOT NULL,
+			cause TEXT NOT NULL, sum INTEGER NOT NULL)`,
+		"INSERT INTO designs VALUES (0, x'', x'', x'', x'', 'not buildable', 1)",
+		fmt.Sprintf("PRAGMA application_id = %d", applicationID), "PRAGMA user_version = 1",
+	} {
+		if _, err := db.Exec(statement); err != nil {
+			t.Fatal(err)
+		}
+	}
+	if err := db.Close(); err != nil {
+		t.Fatal(err)
+	}
+	before, err := os.ReadFile(filepath.Join(dir, FileName))
+	if err != nil {
+		t.Fatal(err)
+	}
+	refused := func(what string, err error) {
+		t.Helper()
+		if !errors.Is(err, ErrOlder) {
+			t.Fatalf("%s: %v", what, err)
+		}
+		for _, want := range []string{dir, "older version of hotfront (0.9)", "search its study again", "SELECT value FROM meta WHERE key = 'study'"} {
+			if !strings.Contains(err.Error(), want) {
+				t.Errorf("%s: %v; want %q", what, err, want)
+			}
+		}
+	}
+	refused("read", readAll(dir))
+	for range 2 { // the second shows that the first let the lock go
+		_, err := Open(dir, meta())
+		refused("open", err)
+	}
+	if db, err = sql.Open("sqlite", filepath.Join(dir, FileName)); err != nil {
+		t.Fatal(err)
+	}
+	var study string
+	if err := db.QueryRow("SELECT value FROM meta WHERE key = 'study'").Scan(&study); err != nil || study != "study: old" {
+		t.Errorf("study %q, %v", study, err)
+	}
+	if err := db.Close(); err != nil {
+		t.Fatal(err)
+	}
+	if after, err := os.ReadFile(filepath.Join(dir, FileName)); err != nil || !bytes.Equal(before, after) {
+		t.Errorf("the file has changed: %v", err)
 	}
 }
 

@@ -24,6 +24,8 @@ const (
 	ErrFull = Error("archive: the disk is full")
 	// ErrOtherRun: the folder holds a run that computes something else; see MismatchError.
 	ErrOtherRun = Error("archive: the folder holds another run")
+	// ErrOlder: the file has a layout that this program no longer reads; see OlderError.
+	ErrOlder = Error("archive: the run was made by an older version of hotfront")
 	// ErrNewer: the file has a layout that this program does not know.
 	ErrNewer = Error("archive: the file was written by a newer program")
 )
@@ -79,6 +81,26 @@ func (e *LockedError) Error() string {
 	}
 	return fmt.Sprintf("another search is writing to %s%s; wait for it, stop it, or use another folder", e.Dir, owner)
 }
+
+// OlderError says that the run was made by an older version of the program, whose files this one does not
+// read, and what to do. It unwraps to ErrOlder.
+type OlderError struct {
+	File    string
+	Program string // version that began the run, may be empty
+}
+
+func (e *OlderError) Error() string {
+	version := ""
+	if e.Program != "" {
+		version = " (" + e.Program + ")"
+	}
+	return fmt.Sprintf("%s was made by an older version of hotfront%s, which kept designs in another way: search its study again "+
+		"in a new folder. The study is in the file's table meta under the key study, as the sqlite3 shell gives it by "+
+		"SELECT value FROM meta WHERE key = 'study'; the designs are in its table designs", e.File, version)
+}
+
+// Unwrap makes errors.Is(err, ErrOlder) hold.
+func (e *OlderError) Unwrap() error { return ErrOlder }
 
 // DamagedError says that the file is not what was written.
 type DamagedError struct {
