@@ -1,7 +1,6 @@
 package optimize
 
 import (
-	"context"
 	"math"
 	oldrand "math/rand"
 	"math/rand/v2"
@@ -23,7 +22,8 @@ const (
 
 	neighbours  = 4  // one in so many of the first population is a neighbour of a start design
 	retries     = 8  // attempts to vary a child that was known before
-	barrenLimit = 50 // generations without a new design that end the search
+	leadShare   = 8  // one in so many children is bred and asked for before the generation ahead of it is complete
+	barrenLimit = 50 // broods without a new design that end the search
 )
 
 // member is one design of the population. It does not change once it is evaluated.
@@ -32,6 +32,7 @@ type member struct {
 	x         []float64 // natural values
 	f         []float64
 	violation float64 // +Inf for a failed design
+	seq       int
 
 	op     int       // operator that made it
 	parent *member   // whom its operator is judged against, nil once judged
@@ -84,7 +85,7 @@ const (
 // generation makes as many children as the population has members (see variation), evaluates them as one
 // batch, and keeps the best of both (see selection). Every feasible non-dominated design ever seen stays in
 // the session's archive, however small the population.
-func runGenetic(ctx context.Context, s *session, set Settings) error {
+func runGenetic(s *session, set Settings) error {
 	size := set.Population
 	if size == 0 {
 		size = defaultPopulation
@@ -95,7 +96,6 @@ func runGenetic(ctx context.Context, s *session, set Settings) error {
 	}
 	g := &generation{
 		session: s,
-		ask:     func(xs [][]float64, seqs []int) error { return s.evaluate(ctx, xs, seqs) },
 		size:    size,
 		shelter: newShelter(s.space, size),
 		vary:    newVariation(s.space, rand.New(rand.NewPCG(set.Seed, streamVary))),
@@ -125,13 +125,14 @@ func runGenetic(ctx context.Context, s *session, set Settings) error {
 // generation is the model that eaopt applies once per generation.
 type generation struct {
 	session *session
-	ask     func(xs [][]float64, seqs []int) error
 	size    int
 	vary    *variation
 	relax   relaxation
 	shelter shelter
 	scan    scanner
-	barren  int // generations without a new design, up to now
+	barren  int       // broods without a new design, up to now
+	early   []*member // children of the next generation that are asked for already
+	upto    int       // number to await for all that is asked for
 }
 
 var _ eaopt.Model = (*generation)(nil)
@@ -145,23 +146,43 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 	for i := range pop.Individuals {
 		members[i] = pop.Individuals[i].Genome.(genome).member
 	}
-	children, err := g.brood(members)
+	children, err := g.breed(members, g.size-len(g.early))
 	if err != nil {
+		if failed := g.session.await(g.upto); failed != nil {
+			return failed
+		}
 		return err
 	}
-	children, err = g.evaluate(children)
-	if err != nil {
+	if children, err = g.ask(children); err != nil {
 		return err
 	}
-	all := append(members, children...)
-	kept := g.shelter.survive(all, g.size, g.relax.level(len(g.session.points)), len(g.session.points))
+	all := append(append(members, g.early...), children...)
+	g.early = nil
+	end := g.upto
+	var stop error
+	if end <= g.session.budget {
+		stop, err = g.ahead(all, len(members))
+		if err != nil {
+			return err
+		}
+	}
+	if err := g.session.await(end); err != nil {
+		return err
+	}
+	if stop != nil {
+		return stop
+	}
+	g.learn(all[len(members):])
+	count := g.session.counted
+	kept := g.shelter.survive(all, g.size, g.relax.level(count), count)
 	alive := make([]bool, len(all))
+	born := len(members)
 	members = make([]*member, len(kept))
 	for k, i := range kept {
 		alive[i] = true
 		members[k] = all[i]
 	}
-	g.vary.credit(all, len(all)-len(children), alive)
+	g.vary.credit(all, born, alive)
 	if len(members) < len(pop.Individuals) {
 		panic("optimize: population shrank")
 	}
@@ -173,6 +194,33 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 		ind.Genome, ind.Fitness, ind.Evaluated = genome{m, float64(i)}, float64(i), true
 	}
 	return nil
+}
+
+// ahead breeds and asks for the first children of the next generation while the last ones of this, all[born:],
+// are under way: from those that survive of all but the last. stop is an end of the search, to be heeded when
+// this generation has been awaited.
+func (g *generation) ahead(all []*member, born int) (stop, err error) {
+	lead := g.size / leadShare
+	known := max(born, len(all)-lead)
+	if lead == 0 || known == born {
+		return nil, nil
+	}
+	if err := g.session.settle(all[known-1].seq + 1); err != nil {
+		return nil, err
+	}
+	g.learn(all[born:known])
+	count := all[known-1].seq + 1
+	kept := g.shelter.survive(all[:known], g.size, g.relax.level(count), count)
+	members := make([]*member, len(kept))
+	for k, i := range kept {
+		members[k] = all[i]
+	}
+	children, stop := g.breed(members, lead)
+	if stop != nil {
+		return stop, nil
+	}
+	g.early, err = g.ask(children)
+	return nil, err
 }
 
 // begin makes and evaluates the first population. It may be smaller than asked for where the space is.
@@ -194,10 +242,14 @@ func (g *generation) begin(rng *rand.Rand) ([]*member, error) {
 	for _, u := range sample.Latin(rng, max(0, g.size-len(first)), sp.dims()) {
 		first = append(first, sp.member(u))
 	}
-	first, err := g.evaluate(first)
+	first, err := g.ask(first)
 	if err != nil {
 		return nil, err
 	}
+	if err := g.session.await(g.upto); err != nil {
+		return nil, err
+	}
+	g.learn(first)
 	g.relax = newRelaxation(first, g.size)
 	members := make([]*member, 0, g.size)
 	for _, i := range survive(first, g.size, g.relax.level(0)) {
@@ -213,42 +265,52 @@ func (s *space) member(u []float64) *member {
 	return m
 }
 
-// evaluate answers members as one batch and drops repetitions.
-func (g *generation) evaluate(members []*member) ([]*member, error) {
-	first := len(g.session.points)
+// ask asks for members and drops repetitions: what was known before and twins among them.
+func (g *generation) ask(members []*member) (kept []*member, err error) {
 	xs, seqs := make([][]float64, len(members)), make([]int, len(members))
 	for i, m := range members {
 		xs[i] = m.x
 	}
-	if err := g.ask(xs, seqs); err != nil {
+	first := g.session.asked()
+	if g.upto, err = g.session.ask(xs, seqs); err != nil {
 		return nil, err
 	}
-	kept := members[:0]
+	kept = members[:0]
 	for i, m := range members {
-		if seqs[i] != first+len(kept) {
-			continue // known before, or a twin within the batch
+		if seqs[i] == first+len(kept) {
+			m.seq = seqs[i]
+			kept = append(kept, m)
 		}
-		m.f, m.violation = g.session.points[seqs[i]].F, g.session.violation[seqs[i]]
-		if m.parent != nil && m.violation <= m.parent.violation {
-			m.origin = m.parent.u
-		}
-		kept = append(kept, m)
 	}
 	return kept, nil
 }
 
-// brood makes the children of a generation: designs never asked for before as far as they can be found. In
+// learn takes up what became of members whose answers are there.
+func (g *generation) learn(members []*member) {
+	memo := g.session.memo
+	for _, m := range members {
+		if m.f != nil {
+			continue
+		}
+		m.f, m.violation = memo.aimsOf(m.seq), memo.violationOf(m.seq)
+		if m.parent != nil && m.violation <= m.parent.violation {
+			m.origin = m.parent.u
+		}
+	}
+}
+
+// breed makes the children of a generation: designs never asked for before as far as they can be found. In
 // a small space of whole numbers and choices the scanner finds what chance does not; when there is none
 // left, or for barrenLimit generations no new design turned up in a large space, the search is exhausted.
-func (g *generation) brood(members []*member) ([]*member, error) {
+func (g *generation) breed(members []*member, count int) ([]*member, error) {
 	sp := g.session.space
 	known := func(x []float64) bool {
 		_, found := g.session.lookup(x)
 		return found
 	}
 	g.vary.prepare(members)
-	children := make([]*member, 0, g.size)
-	for range g.size {
+	children := make([]*member, 0, count)
+	for range count {
 		u := make([]float64, sp.dims())
 		op, parent := g.vary.child(u, members)
 		m := sp.member(u)

@@ -3,14 +3,16 @@ package optimize
 import "fmt"
 
 // Ledger is the durable memory of a run: points by sequence number 0, 1, 2, ... in the order in which the
-// driver asked for them. Its methods are called from one goroutine at a time.
+// driver asked for them. Its methods are called from one goroutine at a time, Record from another one than Recall.
 type Ledger interface {
 	// Recall fills dst[0:n] with the stored points first, first+1, ..., X included, and returns n. It
 	// returns fewer than len(dst) only where the stored points end. The points of dst come with room
-	// for the problem's numbers; Recall may fill it or put slices of its own in place.
+	// for the problem's numbers; Recall may fill it or put slices of its own in place. Extra is nil where
+	// Record was given none.
 	Recall(first int, dst []Point) (n int, err error)
 	// Record stores points under the numbers first, first+1, ... When it returns nil they are durable.
-	// It must not keep their slices.
+	// It must not keep their slices. Extra is nil for points whose further results need not be stored. How
+	// many points come at a time depends on how fast they are recorded.
 	Record(first int, points []Point) error
 }
 

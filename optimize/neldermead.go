@@ -2,7 +2,6 @@ package optimize
 
 import (
 	"cmp"
-	"context"
 	"math"
 	"math/rand/v2"
 	"slices"
@@ -31,13 +30,13 @@ const (
 //
 // Numbers beyond the bounds are mirrored at them. Limits enter by an exact penalty first and as a wall at the
 // end. Whole numbers are rounded; choices without order stay as they are at the place a simplex begins.
-func runSimplex(ctx context.Context, s *session, set Settings) error {
+func runSimplex(s *session, set Settings) error {
 	count := set.Population
 	if count == 0 {
 		count = defaultSimplexes
 	}
 	rng := rand.New(rand.NewPCG(set.Seed, streamSimplex))
-	c := newCrowd(s, func(p *Point) float64 { return p.F[0] })
+	c := newCrowd(s, func(f []float64) float64 { return f[0] })
 
 	// The first sample, and after it more places, without an end.
 	first := make([]*vertex, 0, len(s.space.start)+samplePerSimplex*count)
@@ -50,7 +49,7 @@ func runSimplex(ctx context.Context, s *session, set Settings) error {
 	for _, u := range sample.Latin(rng, samplePerSimplex*count, s.space.dims()) {
 		first = append(first, c.vertex(u))
 	}
-	if err := c.answer(ctx, first); err != nil {
+	if err := c.answer(first); err != nil {
 		return err
 	}
 	c.weigh(first)
@@ -72,7 +71,7 @@ func runSimplex(ctx context.Context, s *session, set Settings) error {
 	for range count {
 		c.add(place(), beginSize)
 	}
-	return c.run(ctx, place)
+	return c.run(place)
 }
 
 // vertex is a place in the unit cube and, once answered, what the design there is worth.
@@ -86,13 +85,13 @@ type vertex struct {
 // crowd is a set of descents that go on in lock-step.
 type crowd struct {
 	session  *session
-	scalar   func(*Point) float64 // one number to minimise
-	weight   float64              // first penalty weight
+	scalar   func(f []float64) float64 // one number to minimise
+	weight   float64                   // first penalty weight
 	descents []*descent
 	still    int // rounds without a new design, up to now
 }
 
-func newCrowd(s *session, scalar func(*Point) float64) *crowd {
+func newCrowd(s *session, scalar func(f []float64) float64) *crowd {
 	return &crowd{session: s, scalar: scalar, weight: weightBegin}
 }
 
@@ -122,24 +121,24 @@ func (c *crowd) weigh(sample []*vertex) {
 }
 
 // answer evaluates vertices as one batch.
-func (c *crowd) answer(ctx context.Context, vertices []*vertex) error {
+func (c *crowd) answer(vertices []*vertex) error {
 	s := c.session
 	xs, seqs := make([][]float64, len(vertices)), make([]int, len(vertices))
 	for i, v := range vertices {
 		xs[i] = v.x
 	}
-	before := len(s.points)
-	if err := s.evaluate(ctx, xs, seqs); err != nil {
+	before := s.asked()
+	if err := s.evaluate(xs, seqs); err != nil {
 		return err
 	}
 	c.still++
-	if len(s.points) > before {
+	if s.asked() > before {
 		c.still = 0
 	}
 	for i, v := range vertices {
-		v.violation = s.violation[seqs[i]]
+		v.violation = s.memo.violationOf(seqs[i])
 		if !math.IsInf(v.violation, 1) {
-			v.value = c.scalar(&s.points[seqs[i]])
+			v.value = c.scalar(s.memo.aimsOf(seqs[i]))
 		}
 	}
 	return nil
@@ -152,7 +151,7 @@ func (c *crowd) add(v *vertex, size float64) {
 
 // run goes on until the budget or the context ends, no new design turns up, or every descent has finished and
 // place, which may be nil, gives no new one.
-func (c *crowd) run(ctx context.Context, place func() *vertex) error {
+func (c *crowd) run(place func() *vertex) error {
 	defer func() {
 		for _, d := range c.descents {
 			d.end()
@@ -171,10 +170,10 @@ func (c *crowd) run(ctx context.Context, place func() *vertex) error {
 				batch = append(batch, d.asked...)
 			}
 		}
-		if len(batch) == 0 || c.still == stillRounds || float64(len(c.session.points)) >= c.session.space.size {
+		if len(batch) == 0 || c.still == stillRounds || float64(c.session.asked()) >= c.session.space.size {
 			return errExhausted
 		}
-		if err := c.answer(ctx, batch); err != nil {
+		if err := c.answer(batch); err != nil {
 			return err
 		}
 		for _, d := range c.descents {

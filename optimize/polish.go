@@ -64,20 +64,25 @@ func Polish(ctx context.Context, p Problem, from Point, set PolishSettings, ledg
 			return nil, fmt.Errorf("%w: scale %v of aim %d", ErrProblem, v, k)
 		}
 	}
-	s := newSession(p, sp, Settings{Evaluations: set.Evaluations, Workers: set.Workers}, ledger, nil)
+	s := newSession(ctx, p, sp, Settings{Evaluations: set.Evaluations, Workers: set.Workers}, ledger, nil)
+	defer func() { _ = s.close() }() // for a panic; its error is looked at below
+	s.keepAll = true
 
 	c := newCrowd(s, nil)
-	c.scalar = func(q *Point) float64 { return achievement(q.F, s.points[0].F, set.Scale) }
+	c.scalar = func(f []float64) float64 { return achievement(f, s.memo.aimsOf(0), set.Scale) }
 	first := &vertex{u: make([]float64, sp.dims()), x: sp.start[0]}
 	sp.encode(first.u, first.x)
-	err = c.answer(ctx, []*vertex{first})
+	err = c.answer([]*vertex{first})
 	if err == nil {
 		size := beginSize
 		for range count {
 			c.add(first, size)
 			size *= againFactor
 		}
-		err = c.run(ctx, nil)
+		err = c.run(nil)
+	}
+	if failed := s.close(); failed != nil {
+		return nil, failed
 	}
 	switch {
 	case errors.Is(err, errBudget), errors.Is(err, errExhausted):
@@ -85,23 +90,25 @@ func Polish(ctx context.Context, p Problem, from Point, set PolishSettings, ledg
 	case ctx.Err() == nil || !errors.Is(err, ctx.Err()):
 		return nil, err
 	}
-	out := &Polished{Point: from, Evaluations: len(s.points)}
-	if len(s.points) == 0 {
+	out := &Polished{Point: from, Evaluations: s.counted}
+	if s.counted == 0 {
 		return out, err
 	}
-	out.Point = s.points[0]
+	out.Point = s.wholePoint(0)
+	base := s.memo.aimsOf(0)
 	best, bestMerit := 0, math.Inf(1)
-	for i := range s.points {
-		if !pareto.Beats(s.points[i].F, s.violation[i], s.points[0].F, s.violation[0]) {
+	for i := range s.counted {
+		f, violation := s.memo.aimsOf(i), s.memo.violationOf(i)
+		if !pareto.Beats(f, violation, base, s.memo.violationOf(0)) {
 			continue
 		}
-		m := wall(achievement(s.points[i].F, s.points[0].F, set.Scale), s.violation[i])
+		m := wall(achievement(f, base, set.Scale), violation)
 		if m < bestMerit {
 			best, bestMerit = i, m
 		}
 	}
 	if best > 0 {
-		out.Point, out.Seq, out.Improved = s.points[best], best, true
+		out.Point, out.Seq, out.Improved = s.wholePoint(best), best, true
 	}
 	return out, err
 }

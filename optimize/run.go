@@ -87,6 +87,9 @@ type Result struct {
 // Run searches the problem until the budget is used up, no further design is left, or ctx ends. ledger and
 // observe may be nil. observe is called from the calling goroutine and must not keep it long.
 //
+// The ledger is written in a goroutine beside the search, which goes on meanwhile; when Run returns, all that
+// it reports is recorded. A ledger that fails ends the run.
+//
 // When ctx ends, designs under evaluation are finished and recorded, and Run returns what was found so far
 // together with the context's error. Other errors come with a nil result: errors of the ledger, an
 // ErrLedgerMismatch, an ErrProblem.
@@ -101,17 +104,21 @@ func Run(ctx context.Context, p Problem, s Settings, ledger Ledger, observe func
 	if s.Population < 0 {
 		return nil, fmt.Errorf("%w: population of %d", ErrProblem, s.Population)
 	}
-	run := newSession(p, sp, s, ledger, observe)
+	run := newSession(ctx, p, sp, s, ledger, observe)
+	defer func() { _ = run.close() }() // for a panic; its error is looked at below
 	switch s.Driver {
 	case Genetic:
-		err = runGenetic(ctx, run, s)
+		err = runGenetic(run, s)
 	case Simplex:
 		if p.Aims() != 1 {
 			return nil, fmt.Errorf("%w: the simplex driver takes one aim, not %d", ErrProblem, p.Aims())
 		}
-		err = runSimplex(ctx, run, s)
+		err = runSimplex(run, s)
 	default:
 		return nil, fmt.Errorf("%w: unknown %v", ErrProblem, s.Driver)
+	}
+	if failed := run.close(); failed != nil {
+		return nil, failed
 	}
 	switch {
 	case errors.Is(err, errBudget):

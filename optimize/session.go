@@ -3,7 +3,6 @@ package optimize
 import (
 	"cmp"
 	"context"
-	"encoding/binary"
 	"fmt"
 	"math"
 	"slices"
@@ -17,8 +16,12 @@ const (
 	errExhausted = Error("optimize: no further design to try")
 )
 
-// session is one run's bookkeeping: it answers batches of designs from the cache, the ledger or the pool,
-// in this order, numbers them, and keeps the front. Drivers see nothing of where an answer came from.
+// session is one run's bookkeeping: it answers designs from the cache, the ledger or the workers, in this
+// order, numbers them, and keeps the front. Drivers see nothing of where an answer came from.
+//
+// Designs are asked for ahead of their answers (ask), and are taken into account in the order of their numbers
+// when a driver waits for them (await), so that the outcome does not depend on when an answer comes. The
+// ledger is written beside that.
 type session struct {
 	problem Problem
 	space   *space
@@ -26,38 +29,82 @@ type session struct {
 	ledger  Ledger
 	live    bool // the ledger holds nothing beyond what was recalled
 	observe func(Progress)
-	pool    *batch.Pool[Point]
+	ctx     context.Context
+	stream  *batch.Stream[Point]
+	record  *batch.Line[Point] // nil without a ledger
+	dims    int
+	aims    int
+	limits  int
+	extras  int
 
-	points    []Point // every design by sequence number
-	violation []float64
-	known     map[string]int // sequence number by key of X
-	key       []byte
-	archive   *pareto.Archive
-	ref       []float64
-	stale     bool // hypervolume must be computed anew
-	causes    map[string]int
-	nearest   int // sequence number of the least violation, -1 for none
-	progress  Progress
-	history   []HistoryRow
+	memo     *memo
+	recalled int      // designs up to this number came from the ledger, the others went to the stream
+	open     []*Point // designs asked for and not yet taken into account
+	settled  int      // designs up to this number have their aims and violation in the memo
+	counted  int      // designs up to this number are taken into account; open[0] is this one
+	keepAll  bool     // keep every point whole
+	whole    map[int]Point
+	archive  *pareto.Archive
+	ref      []float64
+	stale    bool // hypervolume must be computed anew
+	causes   map[string]int
+	nearest  int       // sequence number of the least violation, -1 for none
+	reach    []float64 // least number of each limit, while no design meets all
+	progress Progress
+	history  []HistoryRow
 }
 
-func newSession(p Problem, sp *space, s Settings, ledger Ledger, observe func(Progress)) *session {
+// recordAhead is the most designs that may wait for the ledger before the search waits for it.
+const recordAhead = 1 << 12
+
+// newSession begins a session. It must be closed.
+func newSession(ctx context.Context, p Problem, sp *space, s Settings, ledger Ledger, observe func(Progress)) *session {
 	aims, limits := p.Aims(), p.Limits()
-	return &session{
-		problem: p, space: sp, budget: s.Evaluations, ledger: ledger, live: ledger == nil, observe: observe,
-		pool: batch.NewPool(s.Workers, func() func(*Point) {
+	run := &session{
+		problem: p, space: sp, budget: s.Evaluations, ledger: ledger, live: ledger == nil, observe: observe, ctx: ctx,
+		stream: batch.NewStream(ctx, s.Workers, func() func(*Point) {
 			evaluator := p.NewEvaluator()
 			return func(point *Point) {
 				evaluator.Evaluate(point)
 				vet(point, aims, limits)
 			}
 		}, fail),
-		known:   map[string]int{},
+		dims: sp.dims(), aims: aims, limits: limits, extras: p.Extras(),
+		memo:    newMemo(sp.dims(), aims),
+		whole:   map[int]Point{},
 		archive: pareto.NewArchive(aims),
 		ref:     p.Reference(),
 		causes:  map[string]int{},
 		nearest: -1,
 	}
+	for range limits {
+		run.reach = append(run.reach, math.Inf(1))
+	}
+	if ledger != nil {
+		next := -1
+		run.record = batch.NewLine(recordAhead, func(points []Point) error {
+			if next < 0 {
+				next = run.recalled
+			}
+			if err := ledger.Record(next, points); err != nil {
+				return fmt.Errorf("optimize: record designs from %d: %w", next, err)
+			}
+			next += len(points)
+			return nil
+		})
+	}
+	return run
+}
+
+// close ends the session and makes sure of what it has recorded. It may be called again.
+func (s *session) close() error {
+	s.stream.Close()
+	if s.record == nil {
+		return nil
+	}
+	err := s.record.Close()
+	s.record = nil
+	return err
 }
 
 // fail marks a point as failed. What an evaluator left in its numbers means nothing any more.
@@ -97,99 +144,89 @@ func vet(p *Point, aims, limits int) {
 }
 
 // lookup is the sequence number of a design asked for before.
-func (s *session) lookup(x []float64) (int, bool) {
-	s.key = s.key[:0]
-	for _, v := range x {
-		s.key = binary.LittleEndian.AppendUint64(s.key, math.Float64bits(v+0)) // -0 is 0
-	}
-	seq, found := s.known[string(s.key)]
-	return seq, found
-}
+func (s *session) lookup(x []float64) (int, bool) { return s.memo.find(x) }
 
-// evaluate answers the designs xs, writing the sequence number of each to seqs. It keeps the slices of xs.
-// When the budget or the context ends inside the batch it keeps what it has and returns errBudget or the
-// context's error.
-func (s *session) evaluate(ctx context.Context, xs [][]float64, seqs []int) error {
-	first := len(s.points)
+// asked is the number of designs asked for.
+func (s *session) asked() int { return s.memo.n }
+
+// ask hands the designs xs to the workers, writing the sequence number of each to seqs, and returns the number
+// to await for all of them. It does not keep xs. Designs beyond the budget are not asked for; whoever awaits
+// them gets errBudget.
+func (s *session) ask(xs [][]float64, seqs []int) (upto int, err error) {
+	first := s.memo.n
+	beyond := 0
 	for i, x := range xs {
-		if seq, found := s.lookup(x); found {
+		if seq, found := s.memo.find(x); found {
 			seqs[i] = seq
 			s.progress.Duplicates++
 			continue
 		}
-		seqs[i] = len(s.points)
-		s.known[string(s.key)] = seqs[i]
-		p := NewPoint(s.problem)
-		p.X = x
-		s.points = append(s.points, p)
+		if s.memo.n == s.budget {
+			seqs[i] = s.budget + beyond
+			beyond++
+			continue
+		}
+		seqs[i] = s.memo.add(x)
 	}
-	var stop error
-	if s.budget < len(s.points) {
-		s.forget(max(first, s.budget))
-		stop = errBudget
+	upto = s.memo.n + beyond
+	fresh := s.memo.n - first
+	if fresh == 0 {
+		return upto, nil
 	}
-	if done, err := s.answer(ctx, first); err != nil {
-		return err
-	} else if done < len(s.points) {
-		s.forget(done)
-		stop = ctx.Err()
+	points := make([]Point, fresh)
+	room := make([]float64, fresh*(s.limits+s.extras))
+	cut := func(n int) []float64 {
+		part := room[:n:n]
+		room = room[n:]
+		return part
 	}
-	s.account(first)
-	return stop
+	for i := range points {
+		points[i] = Point{X: s.memo.at(first + i), F: s.memo.aimsOf(first + i), G: cut(s.limits), Extra: cut(s.extras)}
+		s.open = append(s.open, &points[i])
+	}
+	n := 0
+	if !s.live {
+		if n, err = s.recall(first, points); err != nil {
+			return 0, err
+		}
+	}
+	if s.live {
+		s.stream.Put(s.open[len(s.open)-fresh+n:]...)
+	}
+	return upto, nil
 }
 
-// forget takes back the numbers from seq on.
-func (s *session) forget(seq int) {
-	for _, p := range s.points[seq:] {
-		s.lookup(p.X)
-		delete(s.known, string(s.key))
+// recall takes the beginning of the points from the ledger and returns how many.
+func (s *session) recall(first int, points []Point) (int, error) {
+	dst := make([]Point, len(points))
+	for i := range dst {
+		dst[i] = Point{X: make([]float64, s.dims), F: make([]float64, s.aims), G: points[i].G, Extra: points[i].Extra}
 	}
-	s.points = s.points[:seq]
+	n, err := s.ledger.Recall(first, dst)
+	if err != nil {
+		return 0, fmt.Errorf("optimize: recall designs from %d: %w", first, err)
+	}
+	if n < 0 || n > len(dst) {
+		panic("optimize: ledger recalled more points than asked for")
+	}
+	for i := range n {
+		if err := s.match(first+i, &points[i], &dst[i]); err != nil {
+			return 0, err
+		}
+		p := &points[i]
+		copy(p.F, dst[i].F)
+		p.G, p.Extra, p.Cause = dst[i].G, dst[i].Extra, dst[i].Cause
+	}
+	s.progress.Recalled += n
+	s.recalled += n
+	s.live = n < len(dst)
+	return n, nil
 }
 
-// answer fills the points from first on and returns the number up to which they are filled and durable.
-func (s *session) answer(ctx context.Context, first int) (int, error) {
-	todo := s.points[first:]
-	recalled := 0
-	if !s.live && len(todo) > 0 {
-		dst := make([]Point, len(todo))
-		for i := range dst {
-			dst[i] = NewPoint(s.problem)
-		}
-		n, err := s.ledger.Recall(first, dst)
-		if err != nil {
-			return 0, fmt.Errorf("optimize: recall designs from %d: %w", first, err)
-		}
-		if n < 0 || n > len(dst) {
-			panic("optimize: ledger recalled more points than asked for")
-		}
-		for i := range n {
-			if err := s.match(first+i, &todo[i], &dst[i]); err != nil {
-				return 0, err
-			}
-			dst[i].X = todo[i].X
-			todo[i] = dst[i]
-		}
-		s.progress.Recalled += n
-		s.live = n < len(dst)
-		recalled = n
-	}
-	done := first + recalled
-	if n := s.pool.Run(ctx, todo[recalled:]); n > 0 {
-		if s.ledger != nil {
-			if err := s.ledger.Record(done, todo[recalled:recalled+n]); err != nil {
-				return 0, fmt.Errorf("optimize: record designs from %d: %w", done, err)
-			}
-		}
-		done += n
-	}
-	return done, nil
-}
-
-// match compares the stored point with the one asked for, bit by bit.
+// match compares the stored point with the one asked for, bit by bit. Its further results may not be stored.
 func (s *session) match(seq int, asked, stored *Point) error {
 	if len(stored.X) != len(asked.X) || len(stored.F) != len(asked.F) ||
-		len(stored.G) != len(asked.G) || len(stored.Extra) != len(asked.Extra) {
+		len(stored.G) != len(asked.G) || stored.Extra != nil && len(stored.Extra) != s.extras {
 		return &MismatchError{Seq: seq}
 	}
 	for k, x := range asked.X {
@@ -200,48 +237,165 @@ func (s *session) match(seq int, asked, stored *Point) error {
 	return nil
 }
 
-// account takes the points from first on into the counts and the front.
-func (s *session) account(first int) {
-	for seq := first; seq < len(s.points); seq++ {
-		p := &s.points[seq]
-		if p.Cause != "" {
-			s.violation = append(s.violation, math.Inf(1))
-			s.progress.Failed++
-			s.causes[p.Cause]++
-			continue
+// settle waits until the aims and violations of the designs up to a number are in the memo. When the context
+// ends before, it takes into account what there is, forgets the rest and returns the context's error.
+func (s *session) settle(upto int) error {
+	upto = min(upto, s.memo.n)
+	if upto <= s.settled {
+		return nil
+	}
+	done := upto
+	if upto > s.recalled {
+		done = s.recalled + s.stream.Wait(upto-s.recalled)
+	}
+	for ; s.settled < done; s.settled++ {
+		p := s.open[s.settled-s.counted]
+		v := math.Inf(1)
+		if p.Cause == "" {
+			v = pareto.Violation(p.G)
 		}
-		v := pareto.Violation(p.G)
-		s.violation = append(s.violation, v)
-		if s.nearest < 0 || v < s.violation[s.nearest] {
-			s.nearest = seq
+		copy(s.memo.aimsOf(s.settled), p.F) // the same, unless an evaluator has put a slice of its own there
+		s.memo.setViolation(s.settled, v)
+	}
+	if done >= upto {
+		return nil
+	}
+	s.memo.drop(done)
+	s.open = s.open[:done-s.counted]
+	if err := s.account(done); err != nil {
+		return err
+	}
+	return s.ctx.Err()
+}
+
+// await waits for the designs up to a number and takes them into account. Beyond the budget it returns
+// errBudget with all that is within it; for the context's end see settle.
+func (s *session) await(upto int) error {
+	if err := s.settle(upto); err != nil {
+		return err
+	}
+	if err := s.account(min(upto, s.memo.n)); err != nil {
+		return err
+	}
+	if upto > s.budget {
+		return errBudget
+	}
+	return nil
+}
+
+// evaluate asks for designs and awaits them.
+func (s *session) evaluate(xs [][]float64, seqs []int) error {
+	upto, err := s.ask(xs, seqs)
+	if err != nil {
+		return err
+	}
+	return s.await(upto)
+}
+
+// account takes the settled designs up to a number into the counts and the front, and has them recorded.
+func (s *session) account(upto int) error {
+	begin := s.counted
+	if upto <= begin {
+		return nil
+	}
+	points := make([]Point, 0, upto-begin)
+	for ; s.counted < upto; s.counted++ {
+		p := *s.open[s.counted-begin]
+		if !s.take(s.counted, &p) && !s.keepAll {
+			p.Extra = nil
+		} else if p.Extra == nil && s.extras > 0 {
+			return &MismatchError{Seq: s.counted} // a run like this one would have stored them
 		}
-		if v > 0 {
-			continue
+		points = append(points, p)
+	}
+	s.open = slices.Delete(s.open, 0, s.counted-begin)
+	if s.record != nil && s.counted > s.recalled {
+		if err := s.record.Put(points[max(0, s.recalled-begin):]); err != nil {
+			return err
 		}
-		s.progress.Feasible++
-		taken, err := s.archive.Add(p.F, seq)
-		if err != nil {
-			panic(err) // vet lets no NaN through
-		}
-		s.stale = s.stale || taken
 	}
 	if s.stale {
 		s.progress.Hypervolume = s.archive.Hypervolume(s.ref)
 		s.stale = false
 	}
-	s.progress.Evaluations = len(s.points)
+	s.progress.Evaluations = s.counted
 	s.progress.Front = s.archive.Len()
 	s.progress.Generation++
-	if len(s.points) > first {
-		s.history = append(s.history, HistoryRow{
-			Evaluations: len(s.points),
-			Feasible:    s.progress.Feasible,
-			Front:       s.progress.Front,
-			Hypervolume: s.progress.Hypervolume,
-		})
-	}
+	s.history = append(s.history, HistoryRow{
+		Evaluations: s.counted,
+		Feasible:    s.progress.Feasible,
+		Front:       s.progress.Front,
+		Hypervolume: s.progress.Hypervolume,
+	})
 	if s.observe != nil {
 		s.observe(s.progress)
+	}
+	return nil
+}
+
+// take takes one design into the counts and the front, and reports whether its further results are of use:
+// when it is on the front as of now, and while no design meets all limits, when it comes nearer than any
+// before to all of them or to one of them. This depends on the designs up to this one alone, so that a run that
+// goes on, from whatever place, has stored the same.
+func (s *session) take(seq int, p *Point) bool {
+	if s.keepAll {
+		s.hold(seq, p)
+	}
+	if p.Cause != "" {
+		s.progress.Failed++
+		s.causes[p.Cause]++
+		return false
+	}
+	v := s.memo.violationOf(seq)
+	use := false
+	if v > 0 && s.progress.Feasible == 0 {
+		for k, g := range p.G {
+			if g < s.reach[k] {
+				s.reach[k], use = g, true
+			}
+		}
+		if s.nearest < 0 || v < s.memo.violationOf(s.nearest) {
+			s.let(s.nearest)
+			s.nearest, use = seq, true
+			s.hold(seq, p)
+		}
+	}
+	if v > 0 {
+		return use
+	}
+	s.progress.Feasible++
+	s.let(s.nearest)
+	s.nearest = -1
+	taken, err := s.archive.Add(p.F, seq)
+	if err != nil {
+		panic(err) // vet lets no NaN through
+	}
+	if taken {
+		s.stale = true
+		s.hold(seq, p)
+		for _, tag := range s.archive.Left() {
+			s.let(tag)
+		}
+	}
+	return taken
+}
+
+// hold keeps a point whole, in slices of its own: those that it was answered in belong to a whole batch.
+func (s *session) hold(seq int, p *Point) {
+	s.whole[seq] = Point{X: p.X, F: p.F, G: slices.Clone(p.G), Extra: slices.Clone(p.Extra), Cause: p.Cause}
+}
+
+// wholePoint is a point held, in slices that do not keep the memo alive.
+func (s *session) wholePoint(seq int) Point {
+	p := s.whole[seq]
+	p.X, p.F = slices.Clone(p.X), slices.Clone(p.F)
+	return p
+}
+
+// let lets go of the numbers of a design that is neither on the front nor the nearest any more.
+func (s *session) let(seq int) {
+	if !s.keepAll && seq >= 0 {
+		delete(s.whole, seq)
 	}
 }
 
@@ -260,11 +414,11 @@ func (s *session) result(exhausted bool) *Result {
 	}
 	for i := range s.archive.Len() {
 		seq := s.archive.At(i).Tag
-		r.Front = append(r.Front, s.points[seq])
+		r.Front = append(r.Front, s.wholePoint(seq))
 		r.FrontSeq = append(r.FrontSeq, seq)
 	}
 	if len(r.Front) == 0 && s.nearest >= 0 {
-		p := s.points[s.nearest]
+		p := s.wholePoint(s.nearest)
 		r.LeastViolation, r.LeastViolationSeq = &p, s.nearest
 	}
 	for cause, count := range s.causes {

@@ -82,6 +82,9 @@ func readFront(run *archive.Archive, most int) (*report.Front, error) {
 		}
 		if v := pareto.Violation(p.G); v > 0 {
 			if v < least && feasible == 0 {
+				if p.Extra == nil && len(m.Extras) > 0 {
+					return noResults(seq)
+				}
 				least = v
 				nearest := clonePoint(p)
 				f.Nearest, f.NearestSeq = &nearest, seq
@@ -91,8 +94,15 @@ func readFront(run *archive.Archive, most int) (*report.Front, error) {
 		feasible++
 		aims := slices.Clone(p.F)
 		taken, err := kept.Add(aims, seq)
-		if taken {
-			members[seq] = clonePoint(p)
+		if !taken {
+			return err
+		}
+		if p.Extra == nil && len(m.Extras) > 0 {
+			return noResults(seq)
+		}
+		members[seq] = clonePoint(p)
+		for _, tag := range kept.Left() {
+			delete(members, tag)
 		}
 		return err
 	})
@@ -127,12 +137,21 @@ func clonePoint(p *optimize.Point) optimize.Point {
 	return optimize.Point{X: slices.Clone(p.X), F: slices.Clone(p.F), G: slices.Clone(p.G), Extra: slices.Clone(p.Extra), Cause: p.Cause}
 }
 
-// reachOf finds how near any of the first total designs comes to each limit on its own.
+// noResults is the error of an archive that holds less than a search stores.
+func noResults(seq int) error {
+	return fmt.Errorf("the archive holds no results of design %s, which a search keeps: it was not written by one", report.ID(seq))
+}
+
+// reachOf finds how near any of the first total designs comes to each limit on its own. Margins are compared by
+// the limits' own numbers, as a search does, which stores the results of the designs that come nearer than those
+// before.
 func reachOf(run *archive.Archive, problem *studies.Problem, total int) ([]report.Reach, error) {
 	s := problem.Study()
 	reach := make([]report.Reach, len(s.Limits))
+	least := make([]float64, len(s.Limits))
 	for i := range reach {
 		reach[i].Result.Margin = math.Inf(-1)
+		least[i] = math.Inf(1)
 	}
 	err := run.Each(func(seq int, p *optimize.Point) error {
 		if seq == total {
@@ -141,14 +160,23 @@ func reachOf(run *archive.Archive, problem *studies.Problem, total int) ([]repor
 		if p.Cause != "" {
 			return nil
 		}
-		engine, perf := s.EngineAt(p.X), problem.PerformanceOf(p.Extra)
-		for i, r := range s.LimitResults(&engine, &perf) {
-			if p.G[i] <= 0 {
+		var results []studies.LimitResult
+		for i, g := range p.G {
+			if g <= 0 {
 				reach[i].Met++
 			}
-			if r.Margin > reach[i].Result.Margin {
-				reach[i].Result, reach[i].Seq = r, seq
+			if g >= least[i] {
+				continue
 			}
+			if results == nil {
+				if p.Extra == nil {
+					return noResults(seq)
+				}
+				engine, perf := s.EngineAt(p.X), problem.PerformanceOf(p.Extra)
+				results = s.LimitResults(&engine, &perf)
+			}
+			least[i] = g
+			reach[i].Result, reach[i].Seq = results[i], seq
 		}
 		return nil
 	})

@@ -1,5 +1,5 @@
-// Package batch works through batches of independent items in goroutines. It is the only place of the
-// search that starts any.
+// Package batch works through independent items in goroutines: a batch at a time (Pool), as they come
+// (Stream), or one after another beside the caller (Line). It is the only place of the search that starts any.
 //
 // Items are handed out one at a time in ascending order, so a slow item holds up one worker and no
 // other, and what is finished when a context ends is always a prefix of the batch. Each item is
@@ -68,16 +68,15 @@ func (p *Pool[T]) Run(ctx context.Context, items []T) int {
 	return int(done.Load())
 }
 
-// one does one item and turns a panic into a failed item.
+// one does one item.
 func (p *Pool[T]) one(w int, item *T) {
-	defer func() {
-		if r := recover(); r != nil {
-			p.failed(item, fmt.Sprintf("panic: %v", r))
-			p.workers[w] = p.newWorker()
-		}
-	}()
-	p.workers[w](item)
+	if !attempt(p.workers[w], item, p.failed) {
+		p.workers[w] = p.newWorker()
+	}
 }
+
+// panicked is the cause of a failed item whose work panicked.
+func panicked(r any) string { return fmt.Sprintf("panic: %v", r) }
 
 // Beside runs f in a goroutine of its own and returns a function that waits for its end. It is for a
 // library method that wants to own its flow of control and talks through channels.

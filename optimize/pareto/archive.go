@@ -11,6 +11,7 @@ import (
 type Archive struct {
 	aims   int
 	points []*Tagged // ascending by aim 0, then by the further aims
+	left   []int     // tags of the points that the latest addition made leave
 	sweep  sweep
 }
 
@@ -44,6 +45,9 @@ func (a *Archive) Hypervolume(ref []float64) float64 {
 	return a.sweep.sorted(ref)
 }
 
+// Left are the tags of the points that left with the latest addition. The slice is used again by the next.
+func (a *Archive) Left() []int { return a.left }
+
 // Add offers a point and reports whether the archive took it; points that it dominates leave. The archive
 // keeps f, which must not change afterwards. The search for a place costs log n with one or two aims and
 // n with three.
@@ -54,9 +58,11 @@ func (a *Archive) Add(f []float64, tag int) (bool, error) {
 	if err := check(0, f); err != nil {
 		return false, err
 	}
+	a.left = a.left[:0]
 	at := sort.Search(len(a.points), func(i int) bool { return slices.Compare(a.points[i].F, f) >= 0 })
 	if at < len(a.points) && slices.Equal(a.points[at].F, f) {
 		if tag < a.points[at].Tag {
+			a.left = append(a.left, a.points[at].Tag)
 			a.points[at].Tag = tag
 			return true, nil
 		}
@@ -76,6 +82,7 @@ func (a *Archive) Add(f []float64, tag int) (bool, error) {
 	kept := at
 	for i, p := range after {
 		if Dominates(f, p.F) {
+			a.left = append(a.left, p.Tag)
 			continue
 		}
 		if a.aims <= 2 { // nor is any later point dominated

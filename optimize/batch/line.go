@@ -1,0 +1,87 @@
+package batch
+
+import "sync"
+
+// Line hands items to one goroutine that works through them in order, as many at a time as have gathered: what
+// takes long for each call, such as making sure of a disk, does not hold up who puts them. Its methods are
+// called from one goroutine.
+type Line[T any] struct {
+	most int
+	work func([]T) error
+	wait func()
+
+	mu      sync.Mutex
+	changed sync.Cond
+	waiting []T
+	busy    bool
+	closed  bool
+	err     error
+}
+
+// NewLine makes a line in which at most so many items wait before Put waits too. work must not keep its slice.
+// After its first error it is not called again. Close must be called.
+func NewLine[T any](most int, work func([]T) error) *Line[T] {
+	l := &Line[T]{most: most, work: work}
+	l.changed.L = &l.mu
+	l.wait = Beside(l.loop)
+	return l
+}
+
+// Put takes items to be worked on. It returns the first error of work so far.
+func (l *Line[T]) Put(items []T) error {
+	l.mu.Lock()
+	defer l.mu.Unlock()
+	for l.err == nil && len(l.waiting) > l.most {
+		l.changed.Wait()
+	}
+	if l.err == nil {
+		l.waiting = append(l.waiting, items...)
+		l.changed.Broadcast()
+	}
+	return l.err
+}
+
+// Flush waits until all items have been worked on, or work has failed, and returns its error.
+func (l *Line[T]) Flush() error {
+	l.mu.Lock()
+	defer l.mu.Unlock()
+	for l.err == nil && (l.busy || len(l.waiting) > 0) {
+		l.changed.Wait()
+	}
+	return l.err
+}
+
+// Close flushes and ends the goroutine.
+func (l *Line[T]) Close() error {
+	err := l.Flush()
+	l.mu.Lock()
+	l.closed = true
+	l.changed.Broadcast()
+	l.mu.Unlock()
+	l.wait()
+	return err
+}
+
+func (l *Line[T]) loop() {
+	var items []T
+	l.mu.Lock()
+	defer l.mu.Unlock()
+	for {
+		for len(l.waiting) == 0 && !l.closed {
+			l.changed.Wait()
+		}
+		if l.err != nil || len(l.waiting) == 0 {
+			return
+		}
+		items, l.waiting, l.busy = l.waiting, items[:0], true
+		l.mu.Unlock()
+		err := l.work(items)
+		clear(items)
+		l.mu.Lock()
+		l.busy, l.err = false, err
+		l.changed.Broadcast()
+		if err != nil {
+			return
+		}
+	}
+}
