@@ -45,8 +45,6 @@ type session struct {
 	keepAll  bool     // keep every point whole
 	whole    map[int]Point
 	archive  *pareto.Archive
-	ref      []float64
-	stale    bool // hypervolume must be computed anew
 	causes   map[string]int
 	nearest  int       // sequence number of the least violation, -1 for none
 	reach    []float64 // least number of each limit, while no design meets all
@@ -73,10 +71,10 @@ func newSession(ctx context.Context, p Problem, sp *space, s Settings, ledger Le
 		memo:    newMemo(sp.dims(), aims),
 		whole:   map[int]Point{},
 		archive: pareto.NewArchive(aims),
-		ref:     p.Reference(),
 		causes:  map[string]int{},
 		nearest: -1,
 	}
+	run.archive.Measure(p.Reference())
 	for range limits {
 		run.reach = append(run.reach, math.Inf(1))
 	}
@@ -314,10 +312,7 @@ func (s *session) account(upto int) error {
 			return err
 		}
 	}
-	if s.stale {
-		s.progress.Hypervolume = s.archive.Hypervolume(s.ref)
-		s.stale = false
-	}
+	s.progress.Hypervolume = s.archive.Measured()
 	s.progress.Evaluations = s.counted
 	s.progress.Front = s.archive.Len()
 	s.progress.Generation++
@@ -371,7 +366,6 @@ func (s *session) take(seq int, p *Point) bool {
 		panic(err) // vet lets no NaN through
 	}
 	if taken {
-		s.stale = true
 		s.hold(seq, p)
 		for _, tag := range s.archive.Left() {
 			s.let(tag)
