@@ -22,14 +22,14 @@ const (
 
 	neighbours  = 4  // one in so many of the first population is a neighbour of a start design
 	retries     = 8  // attempts to vary a child that was known before
-	leadShare   = 8  // one in so many children is bred and asked for before the generation ahead of it is complete
+	leadShare   = 8  // one in so many children is under way while the next ones are bred
 	barrenLimit = 50 // broods without a new design that end the search
 )
 
 // member is one design of the population. It does not change once it is evaluated.
 type member struct {
 	u         []float64 // place in the unit cube
-	x         []float64 // natural values
+	x         []float64 // natural values, until it is asked for
 	f         []float64
 	violation float64 // +Inf for a failed design
 	seq       int
@@ -131,8 +131,8 @@ type generation struct {
 	shelter shelter
 	scan    scanner
 	barren  int       // broods without a new design, up to now
-	early   []*member // children of the next generation that are asked for already
-	upto    int       // number to await for all that is asked for
+	flight  []*member // asked for and not awaited
+	upto    int       // number to await for all of them
 }
 
 var _ eaopt.Model = (*generation)(nil)
@@ -146,7 +146,7 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 	for i := range pop.Individuals {
 		members[i] = pop.Individuals[i].Genome.(genome).member
 	}
-	children, err := g.breed(members, g.size-len(g.early))
+	children, err := g.breed(members)
 	if err != nil {
 		if failed := g.session.await(g.upto); failed != nil {
 			return failed
@@ -156,27 +156,22 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 	if children, err = g.ask(children); err != nil {
 		return err
 	}
-	all := append(append(members, g.early...), children...)
-	g.early = nil
-	end := g.upto
-	var stop error
-	if end <= g.session.budget {
-		stop, err = g.ahead(all, len(members))
-		if err != nil {
-			return err
-		}
+	g.flight = append(g.flight, children...)
+	arrived, upto := len(g.flight), g.upto
+	if lead := g.size / leadShare; lead > 0 && len(children) > lead {
+		arrived -= lead
+		upto = g.flight[arrived-1].seq + 1
 	}
-	if err := g.session.await(end); err != nil {
+	if err := g.session.await(upto); err != nil {
 		return err
 	}
-	if stop != nil {
-		return stop
-	}
-	g.learn(all[len(members):])
+	born := len(members)
+	all := append(members, g.flight[:arrived]...)
+	g.flight = slices.Clone(g.flight[arrived:])
+	g.learn(all[born:])
 	count := g.session.counted
 	kept := g.shelter.survive(all, g.size, g.relax.level(count), count)
 	alive := make([]bool, len(all))
-	born := len(members)
 	members = make([]*member, len(kept))
 	for k, i := range kept {
 		alive[i] = true
@@ -194,33 +189,6 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 		ind.Genome, ind.Fitness, ind.Evaluated = genome{m, float64(i)}, float64(i), true
 	}
 	return nil
-}
-
-// ahead breeds and asks for the first children of the next generation while the last ones of this, all[born:],
-// are under way: from those that survive of all but the last. stop is an end of the search, to be heeded when
-// this generation has been awaited.
-func (g *generation) ahead(all []*member, born int) (stop, err error) {
-	lead := g.size / leadShare
-	known := max(born, len(all)-lead)
-	if lead == 0 || known == born {
-		return nil, nil
-	}
-	if err := g.session.settle(all[known-1].seq + 1); err != nil {
-		return nil, err
-	}
-	g.learn(all[born:known])
-	count := all[known-1].seq + 1
-	kept := g.shelter.survive(all[:known], g.size, g.relax.level(count), count)
-	members := make([]*member, len(kept))
-	for k, i := range kept {
-		members[k] = all[i]
-	}
-	children, stop := g.breed(members, lead)
-	if stop != nil {
-		return stop, nil
-	}
-	g.early, err = g.ask(children)
-	return nil, err
 }
 
 // begin makes and evaluates the first population. It may be smaller than asked for where the space is.
@@ -278,7 +246,7 @@ func (g *generation) ask(members []*member) (kept []*member, err error) {
 	kept = members[:0]
 	for i, m := range members {
 		if seqs[i] == first+len(kept) {
-			m.seq = seqs[i]
+			m.seq, m.x = seqs[i], nil // the memo has it
 			kept = append(kept, m)
 		}
 	}
@@ -302,16 +270,19 @@ func (g *generation) learn(members []*member) {
 // breed makes the children of a generation: designs never asked for before as far as they can be found. In
 // a small space of whole numbers and choices the scanner finds what chance does not; when there is none
 // left, or for barrenLimit generations no new design turned up in a large space, the search is exhausted.
-func (g *generation) breed(members []*member, count int) ([]*member, error) {
+func (g *generation) breed(members []*member) ([]*member, error) {
 	sp := g.session.space
 	known := func(x []float64) bool {
 		_, found := g.session.lookup(x)
 		return found
 	}
 	g.vary.prepare(members)
-	children := make([]*member, 0, count)
-	for range count {
-		u := make([]float64, sp.dims())
+	children := make([]*member, 0, g.size)
+	dims := sp.dims()
+	room := make([]float64, g.size*dims) // places go on in their children, so each brood has its own
+	for range g.size {
+		u := room[:dims:dims]
+		room = room[dims:]
 		op, parent := g.vary.child(u, members)
 		m := sp.member(u)
 		for try := 0; known(m.x); try++ {

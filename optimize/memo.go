@@ -79,25 +79,30 @@ func hash(x []float64) uint64 {
 	return h ^ h>>32
 }
 
-// add gives a design that is not known a number. It copies x.
-func (m *memo) add(x []float64) int {
+// add gives the number of a design and whether it is new. It copies x.
+func (m *memo) add(x []float64) (seq int, fresh bool) {
+	seq, place := m.look(x)
+	if seq >= 0 {
+		return seq, false
+	}
 	if m.n%memoChunk == 0 && m.n/memoChunk == len(m.x) {
 		m.x = append(m.x, make([]float64, memoChunk*m.dims))
 		m.f = append(m.f, make([]float64, memoChunk*m.aims))
 		m.violation = append(m.violation, make([]float64, memoChunk))
 	}
-	if 4*(m.n+1) > 3*len(m.table) {
-		m.table = make([]uint32, 2*len(m.table))
-		for seq := range m.n {
-			m.enter(seq)
-		}
-	}
-	seq := m.n
+	seq = m.n
 	copy(m.at(seq), x)
 	clear(m.aimsOf(seq))
 	m.n++
-	m.enter(seq)
-	return seq
+	if 4*m.n > 3*len(m.table) {
+		m.table = make([]uint32, 2*len(m.table))
+		for known := range m.n {
+			m.enter(known)
+		}
+		return seq, true
+	}
+	m.table[place] = uint32(seq) + 1
+	return seq, true
 }
 
 func (m *memo) enter(seq int) {

@@ -37,22 +37,22 @@ func fronts(t *testing.T, p *tp.Problem, evaluations int, seed uint64) (share, w
 }
 
 func TestMain(m *testing.M) {
-	flag.Bool("full", false, "quality table over 11 seeds instead of 3")
+	flag.Bool("full", false, "quality table over 41 seeds instead of 11")
 	flag.Parse()
 	os.Exit(m.Run())
 }
 
 // TestQualityTable prints, for each problem, the median over the seeds of the share of the ideal hypervolume
-// that 100 designs picked from the front reach after 10,000 evaluations, and holds it against a floor. Three
-// seeds by default, one under the race detector, which is too few to judge by;
-// go test -run TestQualityTable -v . -full runs 11.
+// that 100 designs picked from the front reach after 10,000 evaluations, and holds it against a floor. Eleven
+// seeds by default, since a median of fewer is a lottery on ZDT4, where every third run stays in a local front;
+// one under the race detector, which is too few to judge by; go test -run TestQualityTable -v . -full runs 41.
 //
 // The floor lies a little below what 11 seeds gave when it was set; it is there to notice a loss of quality.
 // The driver's numbers were set on the problems above the line; those below were only watched.
 func TestQualityTable(t *testing.T) {
 	seeds := defaultSeeds
 	if flag.Lookup("full").Value.String() == "true" {
-		seeds = 11
+		seeds = 41
 	}
 	for _, row := range []struct {
 		problem *tp.Problem

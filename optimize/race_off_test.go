@@ -3,4 +3,4 @@
 package optimize_test
 
 // defaultSeeds of the quality table.
-const defaultSeeds = 3
+const defaultSeeds = 11

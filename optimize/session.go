@@ -154,17 +154,20 @@ func (s *session) ask(xs [][]float64, seqs []int) (upto int, err error) {
 	first := s.memo.n
 	beyond := 0
 	for i, x := range xs {
-		if seq, found := s.memo.find(x); found {
-			seqs[i] = seq
-			s.progress.Duplicates++
-			continue
-		}
 		if s.memo.n == s.budget {
+			if seq, found := s.memo.find(x); found {
+				seqs[i] = seq
+				s.progress.Duplicates++
+				continue
+			}
 			seqs[i] = s.budget + beyond
 			beyond++
 			continue
 		}
-		seqs[i] = s.memo.add(x)
+		var fresh bool
+		if seqs[i], fresh = s.memo.add(x); !fresh {
+			s.progress.Duplicates++
+		}
 	}
 	upto = s.memo.n + beyond
 	fresh := s.memo.n - first

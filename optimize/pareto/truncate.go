@@ -1,7 +1,6 @@
 package pareto
 
 import (
-	"cmp"
 	"math"
 	"slices"
 )
@@ -40,7 +39,13 @@ func truncate2(points [][]float64, ref []float64, drop int, out []bool) {
 		order[i] = i
 	}
 	slices.SortFunc(order, func(a, b int) int {
-		return cmp.Or(slices.Compare(points[a], points[b]), cmp.Compare(a, b))
+		switch p, q := points[a], points[b]; {
+		case p[0] < q[0], p[0] == q[0] && p[1] < q[1]:
+			return -1
+		case p[0] > q[0], p[1] > q[1]:
+			return 1
+		}
+		return a - b
 	})
 	prev, next := make([]int, n), make([]int, n) // positions in order; -1 and n are the ends
 	for k := range n {
@@ -59,13 +64,11 @@ func truncate2(points [][]float64, ref []float64, drop int, out []bool) {
 	for k := range n {
 		update(k)
 	}
+	begin := 0
 	for range drop {
-		worst := -1
-		for k := range n {
-			if out[order[k]] {
-				continue
-			}
-			if worst < 0 || share[k] < share[worst] || share[k] == share[worst] && order[k] > order[worst] {
+		worst := begin
+		for k := next[begin]; k < n; k = next[k] {
+			if share[k] < share[worst] || share[k] == share[worst] && order[k] > order[worst] {
 				worst = k
 			}
 		}
@@ -74,6 +77,8 @@ func truncate2(points [][]float64, ref []float64, drop int, out []bool) {
 		if p >= 0 {
 			next[p] = q
 			update(p)
+		} else {
+			begin = q
 		}
 		if q < n {
 			prev[q] = p
