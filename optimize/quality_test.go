@@ -38,6 +38,7 @@ func fronts(t *testing.T, p *tp.Problem, evaluations int, seed uint64) (share, w
 
 func TestMain(m *testing.M) {
 	flag.Bool("full", false, "quality table over 41 seeds instead of 11")
+	flag.Bool("million", false, "memory of a run of a million designs")
 	flag.Parse()
 	os.Exit(m.Run())
 }

@@ -6,6 +6,7 @@ import (
 	"fmt"
 	"math"
 	"slices"
+	"time"
 
 	"hotfront/optimize/batch"
 	"hotfront/optimize/pareto"
@@ -52,8 +53,13 @@ type session struct {
 	history  []HistoryRow
 }
 
-// recordAhead is the most designs that may wait for the ledger before the search waits for it.
-const recordAhead = 1 << 12
+const (
+	// recordAhead is the most designs that may wait for the ledger before the search waits for it.
+	recordAhead = 1 << 12
+	// recordPause is how long designs gather between two calls of the ledger: long against what making sure of a
+	// disk costs, short against what anybody minds losing by a power cut.
+	recordPause = 50 * time.Millisecond
+)
 
 // newSession begins a session. It must be closed.
 func newSession(ctx context.Context, p Problem, sp *space, s Settings, ledger Ledger, observe func(Progress)) *session {
@@ -80,7 +86,7 @@ func newSession(ctx context.Context, p Problem, sp *space, s Settings, ledger Le
 	}
 	if ledger != nil {
 		next := -1
-		run.record = batch.NewLine(recordAhead, func(points []Point) error {
+		run.record = batch.NewLine(recordAhead, recordPause, func(points []Point) error {
 			if next < 0 {
 				next = run.recalled
 			}

@@ -1,27 +1,35 @@
 package batch
 
-import "sync"
+import (
+	"sync"
+	"time"
+)
 
 // Line hands items to one goroutine that works through them in order, as many at a time as have gathered: what
 // takes long for each call, such as making sure of a disk, does not hold up who puts them. Its methods are
 // called from one goroutine.
 type Line[T any] struct {
-	most int
-	work func([]T) error
-	wait func()
+	most  int
+	pause time.Duration
+	work  func([]T) error
+	wait  func()
 
 	mu      sync.Mutex
 	changed sync.Cond
 	waiting []T
 	busy    bool
+	resting bool // since the call before, for the pause
+	hurried bool // somebody waits for the items
 	closed  bool
 	err     error
 }
 
-// NewLine makes a line in which at most so many items wait before Put waits too. work must not keep its slice.
-// After its first error it is not called again. Close must be called.
-func NewLine[T any](most int, work func([]T) error) *Line[T] {
-	l := &Line[T]{most: most, work: work}
+// NewLine makes a line in which at most so many items wait before Put waits too. After a call of work items
+// gather for the given pause, unless somebody waits for them: it bounds what the calls cost, and is how
+// long an item may lie here. work must not keep its slice. After its first error it is not
+// called again. Close must be called.
+func NewLine[T any](most int, pause time.Duration, work func([]T) error) *Line[T] {
+	l := &Line[T]{most: most, pause: pause, work: work}
 	l.changed.L = &l.mu
 	l.wait = Beside(l.loop)
 	return l
@@ -45,9 +53,12 @@ func (l *Line[T]) Put(items []T) error {
 func (l *Line[T]) Flush() error {
 	l.mu.Lock()
 	defer l.mu.Unlock()
+	l.hurried = true
+	l.changed.Broadcast()
 	for l.err == nil && (l.busy || len(l.waiting) > 0) {
 		l.changed.Wait()
 	}
+	l.hurried = false
 	return l.err
 }
 
@@ -67,13 +78,17 @@ func (l *Line[T]) loop() {
 	l.mu.Lock()
 	defer l.mu.Unlock()
 	for {
-		for len(l.waiting) == 0 && !l.closed {
+		for !l.closed && (len(l.waiting) == 0 || l.resting && !l.hurried && len(l.waiting) <= l.most) {
 			l.changed.Wait()
 		}
 		if l.err != nil || len(l.waiting) == 0 {
 			return
 		}
 		items, l.waiting, l.busy = l.waiting, items[:0], true
+		if l.pause > 0 && !l.resting {
+			l.resting = true
+			time.AfterFunc(l.pause, l.rested)
+		}
 		l.mu.Unlock()
 		err := l.work(items)
 		clear(items)
@@ -84,4 +99,11 @@ func (l *Line[T]) loop() {
 			return
 		}
 	}
+}
+
+func (l *Line[T]) rested() {
+	l.mu.Lock()
+	defer l.mu.Unlock()
+	l.resting = false
+	l.changed.Broadcast()
 }
