@@ -133,6 +133,7 @@ type generation struct {
 	barren  int       // broods without a new design, up to now
 	flight  []*member // asked for and not awaited
 	upto    int       // number to await for all of them
+	values  []float64 // natural values of the brood until it is asked for
 }
 
 var _ eaopt.Model = (*generation)(nil)
@@ -279,12 +280,15 @@ func (g *generation) breed(members []*member) ([]*member, error) {
 	g.vary.prepare(members)
 	children := make([]*member, 0, g.size)
 	dims := sp.dims()
-	room := make([]float64, g.size*dims) // places go on in their children, so each brood has its own
-	for range g.size {
-		u := room[:dims:dims]
-		room = room[dims:]
-		op, parent := g.vary.child(u, members)
-		m := sp.member(u)
+	places, born := make([]float64, g.size*dims), make([]member, g.size)
+	if len(g.values) == 0 {
+		g.values = make([]float64, g.size*dims)
+	}
+	for i := range g.size {
+		m := &born[i]
+		m.u, m.x = places[i*dims:(i+1)*dims:(i+1)*dims], g.values[i*dims:(i+1)*dims]
+		m.op, m.parent = g.vary.child(m.u, members)
+		sp.decode(m.x, m.u)
 		for try := 0; known(m.x); try++ {
 			g.session.progress.Duplicates++
 			if try == retries {
@@ -299,7 +303,6 @@ func (g *generation) breed(members []*member) ([]*member, error) {
 			sp.decode(m.x, m.u)
 		}
 		if m != nil {
-			m.op, m.parent = op, parent
 			children = append(children, m)
 		}
 	}

@@ -58,7 +58,7 @@ const (
 	recordAhead = 1 << 12
 	// recordPause is how long designs gather between two calls of the ledger: long against what making sure of a
 	// disk costs, short against what anybody minds losing by a power cut.
-	recordPause = 50 * time.Millisecond
+	recordPause = 100 * time.Millisecond
 )
 
 // newSession begins a session. It must be closed.
@@ -385,7 +385,10 @@ func (s *session) take(seq int, p *Point) bool {
 
 // hold keeps a point whole, in slices of its own: those that it was answered in belong to a whole batch.
 func (s *session) hold(seq int, p *Point) {
-	s.whole[seq] = Point{X: p.X, F: p.F, G: slices.Clone(p.G), Extra: slices.Clone(p.Extra), Cause: p.Cause}
+	room := append(make([]float64, 0, len(p.G)+len(p.Extra)), p.G...)
+	room = append(room, p.Extra...)
+	n := len(p.G)
+	s.whole[seq] = Point{X: p.X, F: p.F, G: room[:n:n], Extra: room[n:], Cause: p.Cause}
 }
 
 // wholePoint is a point held, in slices that do not keep the memo alive.
