@@ -22,13 +22,14 @@ import (
 // rounded where grain is not 0, so that the front stays small.
 type sized struct {
 	grain    float64
+	bar      float64               // what products of neighbours may be; below 0 nothing is feasible
 	around   func(evaluate func()) // called for each evaluation, nil for nothing
 	rounds   int                   // of arithmetic that an evaluation burns
 	variable []optimize.Variable
 }
 
 func newSized(grain float64) *sized {
-	p := &sized{grain: grain}
+	p := &sized{grain: grain, bar: 0.7}
 	for i := range 12 {
 		p.variable = append(p.variable, optimize.Variable{Name: "x" + strconv.Itoa(i), High: 1})
 	}
@@ -73,7 +74,7 @@ func (p *sized) evaluate(q *optimize.Point) {
 		q.F[0], q.F[1] = math.Ceil(q.F[0]/p.grain)*p.grain, math.Ceil(q.F[1]/p.grain)*p.grain
 	}
 	for k := range q.G {
-		q.G[k] = q.X[k+1]*q.X[k+2] - 0.7
+		q.G[k] = q.X[k+1]*q.X[k+2] - p.bar
 	}
 	for k := range q.Extra {
 		q.Extra[k] = sum*float64(k) + burnt
@@ -110,13 +111,8 @@ func TestBytesPerDesign(t *testing.T) {
 	var heap []float64
 	var at []int
 	set := optimize.Settings{Evaluations: begin + 2*step + 500, Seed: 1, Workers: 2, Population: 40}
-	dir := t.TempDir()
 	p := newSized(1.0 / 32)
-	a, err := archive.Open(dir, p.meta())
-	if err != nil {
-		t.Fatal(err)
-	}
-	res, err := optimize.Run(context.Background(), p, set, a, func(s optimize.Progress) {
+	res, err := optimize.Run(context.Background(), p, set, nil, func(s optimize.Progress) {
 		if s.Evaluations >= begin+len(at)*step && len(at) < 3 {
 			runtime.GC()
 			runtime.GC()
@@ -128,9 +124,6 @@ func TestBytesPerDesign(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	if err := a.Close(); err != nil {
-		t.Fatal(err)
-	}
 	if len(at) != 3 || res.Evaluations != set.Evaluations {
 		t.Fatalf("%d counts, %d designs", len(at), res.Evaluations)
 	}
@@ -140,15 +133,7 @@ func TestBytesPerDesign(t *testing.T) {
 	if got > 1.05*most {
 		t.Errorf("%.0f bytes a design, most %d; front of %d", got, most, len(res.Front))
 	}
-	info, err := os.Stat(filepath.Join(dir, archive.FileName))
-	if err != nil {
-		t.Fatal(err)
-	}
-	stored := float64(info.Size()) / float64(res.Evaluations)
-	if stored > 300 {
-		t.Errorf("%.0f bytes a design on disk", stored)
-	}
-	t.Logf("%.0f bytes a design in memory, %.0f on disk; front of %d", got, stored, len(res.Front))
+	t.Logf("%.0f bytes a design in memory; front of %d", got, len(res.Front))
 }
 
 // TestMillion measures a run of a million designs, with the archive on disk, when asked for by -million: the
@@ -159,7 +144,7 @@ func TestMillion(t *testing.T) {
 	}
 	defer debug.SetGCPercent(debug.SetGCPercent(25)) // as the search command
 	dir := t.TempDir()
-	p := newSized(0)
+	p := newSized(1.0 / 30_000) // shipped studies have 3 or 4 % of their designs on the front; not rounded this one has 25 %
 	a, err := archive.Open(dir, p.meta())
 	if err != nil {
 		t.Fatal(err)

@@ -22,10 +22,13 @@
 // # Memory
 //
 // Every design that a driver asks for gets a sequence number 0, 1, 2, ... A Ledger stores the answers
-// by that number. To go on after an interruption, Run starts again from number zero with the same
-// problem, seed and population; what the ledger holds is taken from there instead of being evaluated,
+// by that number, in a goroutine beside the search. To go on after an interruption, Run starts again from
+// number zero with the same problem, seed and population; what the ledger holds is taken from there instead of being evaluated,
 // and the drivers, being deterministic, arrive where they were. A design that was asked for before is
 // a duplicate: its answer comes from the run's own cache and costs no evaluation.
+//
+// A run keeps of each design its variables, aims and violation, and points with all their results only of those
+// on the front.
 //
 // # Failures
 //

@@ -82,8 +82,10 @@ const (
 // runGenetic searches by generations until ask stops it.
 //
 // The population begins with the problem's start designs, neighbours of them, and a Latin hypercube. Each
-// generation makes as many children as the population has members (see variation), evaluates them as one
-// batch, and keeps the best of both (see selection). Every feasible non-dominated design ever seen stays in
+// generation makes as many children as the population has members (see variation), asks for them, and keeps the
+// best of the population and the children that are in (see survive). The last leadShare-th of what is asked for
+// may still be under way then, so that workers have something to do meanwhile; it takes part in the next
+// selection. Which designs those are is told by their numbers, never by who comes first. Every feasible non-dominated design ever seen stays in
 // the session's archive, however small the population.
 func runGenetic(s *session, set Settings) error {
 	size := set.Population

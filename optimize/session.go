@@ -39,11 +39,12 @@ type session struct {
 	extras  int
 
 	memo     *memo
-	recalled int      // designs up to this number came from the ledger, the others went to the stream
-	open     []*Point // designs asked for and not yet taken into account
-	settled  int      // designs up to this number have their aims and violation in the memo
-	counted  int      // designs up to this number are taken into account; open[0] is this one
-	keepAll  bool     // keep every point whole
+	recalled int         // designs up to this number came from the ledger, the others went to the stream
+	open     []*Point    // designs asked for and not yet taken into account
+	settled  int         // designs up to this number have their aims and violation in the memo
+	spare    [][]float64 // room for further results
+	counted  int         // designs up to this number are taken into account; open[0] is this one
+	keepAll  bool        // keep every point whole
 	whole    map[int]Point
 	archive  *pareto.Archive
 	causes   map[string]int
@@ -181,14 +182,10 @@ func (s *session) ask(xs [][]float64, seqs []int) (upto int, err error) {
 		return upto, nil
 	}
 	points := make([]Point, fresh)
-	room := make([]float64, fresh*(s.limits+s.extras))
-	cut := func(n int) []float64 {
-		part := room[:n:n]
-		room = room[n:]
-		return part
-	}
+	room := make([]float64, fresh*s.limits)
 	for i := range points {
-		points[i] = Point{X: s.memo.at(first + i), F: s.memo.aimsOf(first + i), G: cut(s.limits), Extra: cut(s.extras)}
+		points[i] = Point{X: s.memo.at(first + i), F: s.memo.aimsOf(first + i), G: room[:s.limits:s.limits], Extra: s.extra()}
+		room = room[s.limits:]
 		s.open = append(s.open, &points[i])
 	}
 	n := 0
@@ -201,6 +198,18 @@ func (s *session) ask(xs [][]float64, seqs []int) (upto int, err error) {
 		s.stream.Put(s.open[len(s.open)-fresh+n:]...)
 	}
 	return upto, nil
+}
+
+// extra is room for further results, all zero.
+func (s *session) extra() []float64 {
+	n := len(s.spare)
+	if n == 0 {
+		return make([]float64, s.extras)
+	}
+	room := s.spare[n-1]
+	s.spare = s.spare[:n-1]
+	clear(room)
+	return room
 }
 
 // recall takes the beginning of the points from the ledger and returns how many.
@@ -308,10 +317,21 @@ func (s *session) account(upto int) error {
 	points := make([]Point, 0, upto-begin)
 	for ; s.counted < upto; s.counted++ {
 		p := *s.open[s.counted-begin]
-		if !s.take(s.counted, &p) && !s.keepAll {
-			p.Extra = nil
-		} else if p.Extra == nil && s.extras > 0 {
+		used := s.take(s.counted, &p) || s.keepAll
+		if used && p.Extra == nil && s.extras > 0 {
 			return &MismatchError{Seq: s.counted} // a run like this one would have stored them
+		}
+		// The room of the further results is for the next designs; what is still to be recorded is held apart.
+		room := p.Extra
+		if !used {
+			p.Extra = nil
+		} else if held, ok := s.whole[s.counted]; ok {
+			p.Extra = held.Extra
+		} else {
+			p.Extra = slices.Clone(p.Extra)
+		}
+		if len(room) > 0 {
+			s.spare = append(s.spare, room)
 		}
 		points = append(points, p)
 	}
@@ -383,7 +403,8 @@ func (s *session) take(seq int, p *Point) bool {
 	return taken
 }
 
-// hold keeps a point whole, in slices of its own: those that it was answered in belong to a whole batch.
+// hold keeps a point whole, in slices of its own: those that it was answered in are used again or belong to a
+// whole batch.
 func (s *session) hold(seq int, p *Point) {
 	room := append(make([]float64, 0, len(p.G)+len(p.Extra)), p.G...)
 	room = append(room, p.Extra...)

@@ -5,6 +5,7 @@ import (
 	"errors"
 	"fmt"
 	"runtime"
+	"runtime/debug"
 	"strings"
 	"time"
 
@@ -33,9 +34,10 @@ func (p *program) searchCommand() *cobra.Command {
 	c := &cobra.Command{
 		Use:   "search STUDY --run DIR",
 		Short: "Searches for the front; run again on the same DIR it goes on",
-		Long: `search looks for the designs of a study that no other design beats. Every design goes to an archive in DIR before
-the search goes on, so nothing is lost by Ctrl-C, a kill or a power cut: the same command goes on where it was and ends
-with the front of an undisturbed run. The front depends on study, seed and number of evaluations, not on the workers.
+		Long: `search looks for the designs of a study that no other design beats. Every design goes to an archive in DIR while the
+search goes on. Ctrl-C loses nothing, and a kill or a power cut what was worked on in the last moments: the same command
+goes on where it was and ends with the front of an undisturbed run. The front depends on study, seed and number of
+evaluations, not on the workers.
 DIR must be on a local disk: the archive is not safe on network file systems.
 
 ` + cautions,
@@ -161,7 +163,13 @@ func (p *program) searchIn(ctx context.Context, run *archive.Archive, problem *s
 		pr.log.Warn("the run folder is on a network file system, where the archive is not safe: use a local disk", "run", o.dir)
 	}
 	start := time.Now()
-	r, err := optimize.Run(ctx, problem, optimize.Settings{Evaluations: s.Evaluations, Seed: s.Seed, Workers: o.workers, Driver: driver}, run, pr.observe)
+	var memory thrift
+	defer memory.end()
+	r, err := optimize.Run(ctx, problem, optimize.Settings{Evaluations: s.Evaluations, Seed: s.Seed, Workers: o.workers, Driver: driver}, run,
+		func(at optimize.Progress) {
+			memory.observe(at)
+			pr.observe(at)
+		})
 	pr.end()
 	stopped := err != nil && ctx.Err() != nil && errors.Is(err, ctx.Err())
 	switch {
@@ -185,6 +193,34 @@ func (p *program) searchIn(ctx context.Context, run *archive.Archive, problem *s
 		return err
 	}
 	return p.printFront(front, o.format, &o.top, run.Meta().Model)
+}
+
+// thrift keeps the memory of a long search down. Go lets the heap double before it looks for what is free, which
+// with many designs in it is a lot, and looking costs little, since they hold no pointers; with few designs it is
+// the other way round.
+type thrift struct {
+	set    bool
+	before int
+}
+
+const (
+	manyDesigns   = 100_000 // from here on memory counts
+	thriftPercent = 25      // by which the heap may grow before a collection; Go's default is 100
+)
+
+// observe is called after every batch.
+func (t *thrift) observe(at optimize.Progress) {
+	if at.Evaluations >= manyDesigns && !t.set {
+		t.before, t.set = debug.SetGCPercent(thriftPercent), true
+	}
+}
+
+// end gives the program its own way back.
+func (t *thrift) end() {
+	if t.set {
+		debug.SetGCPercent(t.before)
+		t.set = false
+	}
 }
 
 // explainOther adds to the error of a folder that holds another run what has changed in its study.

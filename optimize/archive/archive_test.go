@@ -31,8 +31,11 @@ func point(seq int) optimize.Point {
 	r := rand.New(rand.NewPCG(uint64(seq), 1))
 	p := optimize.Point{X: []float64{r.NormFloat64(), math.SmallestNonzeroFloat64}, F: []float64{-r.ExpFloat64(), math.MaxFloat64},
 		G: []float64{math.Copysign(0, -1)}, Extra: []float64{1.0 / 3, r.Float64(), -1e-300}}
+	if seq%4 == 1 {
+		p.Extra = nil
+	}
 	if seq%5 == 3 {
-		p.F, p.G, p.Extra = []float64{0, 0}, []float64{0}, []float64{0, 0, 0}
+		p.F, p.G, p.Extra = []float64{0, 0}, []float64{0}, nil
 		p.Cause = strings.Repeat("cause \u00b5 ", seq)
 	}
 	return p

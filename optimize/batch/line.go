@@ -44,7 +44,9 @@ func (l *Line[T]) Put(items []T) error {
 	}
 	if l.err == nil {
 		l.waiting = append(l.waiting, items...)
-		l.changed.Broadcast()
+		if !l.resting || len(l.waiting) > l.most { // else the end of the rest wakes the goroutine
+			l.changed.Broadcast()
+		}
 	}
 	return l.err
 }

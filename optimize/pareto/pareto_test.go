@@ -135,10 +135,35 @@ func TestArchive(t *testing.T) {
 		aims := rapid.IntRange(1, 3).Draw(t, "aims")
 		points := gridSet(aims, 25).Draw(t, "points")
 		tags := rapid.Permutation(indices(len(points))).Draw(t, "order")
+		ref := []float64{4, 3, 4}[:aims]
 		forward, shuffled := NewArchive(aims), NewArchive(aims)
+		forward.Measure(ref)
+		shuffled.Measure(ref)
+		held := map[int]bool{} // by Add and Left, of forward
 		for i := range points {
-			add(t, forward, points[i], i)
+			if add(t, forward, points[i], i) {
+				held[i] = true
+			}
+			for _, tag := range forward.Left() {
+				if !held[tag] {
+					t.Fatalf("%d left, which was not there", tag)
+				}
+				delete(held, tag)
+			}
 			add(t, shuffled, points[tags[i]], tags[i])
+			for _, a := range []*Archive{forward, shuffled} {
+				if got, want := a.Measured(), a.Hypervolume(ref); math.Abs(got-want) > 1e-12 {
+					t.Fatalf("hypervolume followed to %v, is %v", got, want)
+				}
+			}
+		}
+		for i := range forward.Len() {
+			if !held[forward.At(i).Tag] {
+				t.Fatalf("%d is there, which nothing said", forward.At(i).Tag)
+			}
+		}
+		if len(held) != forward.Len() {
+			t.Fatalf("%d said to be there, %d are", len(held), forward.Len())
 		}
 		var want []Tagged
 		for i, p := range points {
@@ -153,7 +178,6 @@ func TestArchive(t *testing.T) {
 			}
 		}
 		slices.SortFunc(want, func(a, b Tagged) int { return slices.Compare(a.F, b.F) })
-		ref := []float64{4, 3, 4}[:aims]
 		for _, a := range []*Archive{forward, shuffled} {
 			if got, want := a.Hypervolume(ref), Hypervolume(points, ref); got != want {
 				t.Fatalf("hypervolume %v, want %v", got, want)
@@ -170,10 +194,12 @@ func TestArchive(t *testing.T) {
 	})
 }
 
-func add(t *rapid.T, a *Archive, f []float64, tag int) {
-	if _, err := a.Add(f, tag); err != nil {
+func add(t *rapid.T, a *Archive, f []float64, tag int) bool {
+	taken, err := a.Add(f, tag)
+	if err != nil {
 		t.Fatal(err)
 	}
+	return taken
 }
 
 func indices(n int) []int {
