@@ -136,6 +136,8 @@ type generation struct {
 	flight  []*member // asked for and not awaited
 	upto    int       // number to await for all of them
 	values  []float64 // natural values of the brood until it is asked for
+	xs      [][]float64
+	seqs    []int
 }
 
 var _ eaopt.Model = (*generation)(nil)
@@ -238,10 +240,11 @@ func (s *space) member(u []float64) *member {
 
 // ask asks for members and drops repetitions: what was known before and twins among them.
 func (g *generation) ask(members []*member) (kept []*member, err error) {
-	xs, seqs := make([][]float64, len(members)), make([]int, len(members))
-	for i, m := range members {
-		xs[i] = m.x
+	xs, seqs := g.xs[:0], slices.Grow(g.seqs[:0], len(members))[:len(members)]
+	for _, m := range members {
+		xs = append(xs, m.x)
 	}
+	g.xs, g.seqs = xs, seqs
 	first := g.session.asked()
 	if g.upto, err = g.session.ask(xs, seqs); err != nil {
 		return nil, err

@@ -43,6 +43,7 @@ type session struct {
 	open     []*Point    // designs asked for and not yet taken into account
 	settled  int         // designs up to this number have their aims and violation in the memo
 	spare    [][]float64 // room for further results
+	done     []Point     // workspace of account
 	counted  int         // designs up to this number are taken into account; open[0] is this one
 	keepAll  bool        // keep every point whole
 	whole    map[int]Point
@@ -129,19 +130,19 @@ func vet(p *Point, aims, limits int) {
 		panic("optimize: evaluator changed the number of aims or limits")
 	}
 	for i, v := range p.F {
-		if math.IsNaN(v) || math.IsInf(v, 0) {
+		if v-v != 0 { // NaN or infinite
 			fail(p, fmt.Sprintf("aim %d is %v", i+1, v))
 			return
 		}
 	}
 	for i, v := range p.G {
-		if math.IsNaN(v) || math.IsInf(v, 0) {
+		if v-v != 0 { // NaN or infinite
 			fail(p, fmt.Sprintf("limit %d is %v", i+1, v))
 			return
 		}
 	}
 	for i, v := range p.Extra {
-		if math.IsNaN(v) || math.IsInf(v, 0) {
+		if v-v != 0 { // NaN or infinite
 			fail(p, fmt.Sprintf("extra %d is %v", i+1, v))
 			return
 		}
@@ -314,7 +315,7 @@ func (s *session) account(upto int) error {
 	if upto <= begin {
 		return nil
 	}
-	points := make([]Point, 0, upto-begin)
+	points := s.done[:0]
 	for ; s.counted < upto; s.counted++ {
 		p := *s.open[s.counted-begin]
 		used := s.take(s.counted, &p) || s.keepAll
@@ -335,6 +336,7 @@ func (s *session) account(upto int) error {
 		}
 		points = append(points, p)
 	}
+	s.done = points
 	s.open = slices.Delete(s.open, 0, s.counted-begin)
 	if s.record != nil && s.counted > s.recalled {
 		if err := s.record.Put(points[max(0, s.recalled-begin):]); err != nil {

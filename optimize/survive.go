@@ -53,10 +53,11 @@ func truncate(points [][]float64, front []int, keep int) []int {
 	scaled := make([][]float64, len(front))
 	store := make([]float64, len(front)*aims)
 	for j, i := range front {
-		scaled[j] = store[j*aims : (j+1)*aims]
+		p := store[j*aims : (j+1)*aims]
+		scaled[j] = p
 		for k, v := range points[i] {
 			if high[k] > low[k] {
-				scaled[j][k] = (v - low[k]) / (high[k] - low[k])
+				p[k] = (v - low[k]) / (high[k] - low[k])
 			}
 		}
 	}
