@@ -78,7 +78,7 @@ func (s *Solver) run() bool {
 		if !s.newtonSteps(a, k) {
 			return false
 		}
-		s.rates(a, b, k)
+		s.rates(b, k)
 		s.films(dt)
 		s.p += (1 - Gamma) / Gamma * (s.p - start)
 		// Second stage, at (n + 1) dt; it starts from the first stage's rates.
@@ -93,9 +93,9 @@ func (s *Solver) run() bool {
 		if n == move.Steps-1 && !s.settle(a, k+1) {
 			return false
 		}
-		s.rates(a, a, k+1)
-		copy(s.mass[:s.n], s.Trace.Mass[k+1][:s.n])
+		s.rates(a, k+1)
 		for i := range s.n {
+			s.mass[i] = s.mass0[i] + a*s.massRate[i]
 			s.energy[i] = s.energy0[i] + a*s.energyRate[i]
 		}
 		for i := s.firstMatrix; i <= s.lastMatrix; i++ {
@@ -176,14 +176,14 @@ func (s *Solver) films(dt float64) {
 	}
 }
 
-// rates works out the rates of mass, energy and matrix temperature at the stage just solved, which took the time a [s] from
-// what it starts from, adds them with the weight w [s] to the integrals of the cycle and keeps the trace.
-func (s *Solver) rates(a, w float64, k int) {
+// rates works out the rates of mass, energy and matrix temperature at the stage just solved, adds
+// them with the weight w [s] to the integrals of the cycle and keeps the trace.
+func (s *Solver) rates(w float64, k int) {
 	n := s.n
-	p := s.p
+	p, rise := s.p, s.p/s.pBefore
 	tr := &s.Trace
 	flow, hFace, cpFace, wLeft, wRight := s.flow[:n], s.hFace[:n], s.cpFace[:n], s.wLeft[:n], s.wRight[:n]
-	t, dT, uae, wall0, mass0 := s.t[:n], s.dT[:n+1], s.uae[:n], s.wall0[:n], s.mass0[:n]
+	t, dT, uae, wall0, m := s.t[:n], s.dT[:n+1], s.uae[:n], s.wall0[:n], s.m[:n]
 	massRate, energyRate, warmth := s.massRate[:n], s.energyRate[:n], s.warmth[:n]
 	heat, temperature, enthalpy := s.sums.heat[:n], s.sums.temperature[:n], s.sums.enthalpy[:n]
 	mass, flows, temps := tr.Mass[k][:n], tr.Flow[k][:n], tr.Temp[k][:n]
@@ -194,7 +194,7 @@ func (s *Solver) rates(a, w float64, k int) {
 		q := uae[i] * (wall0[i] - t[i])
 		rate := flowIn - flowOut
 		massRate[i] = rate
-		mass[i] = mass0[i] + a*rate
+		mass[i] = m[i] * rise * ((t[i] - dT[i]) / t[i]) // as an ideal gas from the state its properties are of: above zero, whatever the step
 		energyRate[i] = energyIn - energyOut + q
 		warmth[i] = q
 		enthalpy[i] += w * energyOut

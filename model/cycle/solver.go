@@ -68,6 +68,7 @@ type Solver struct {
 	newton  int
 
 	before     [MaxCells]float64 // temperatures before a Newton step [K]
+	pBefore    float64           // pressure before the last one [Pa]
 	coarseWork float64           // of the last cycle on the coarse grid, NaN before one [J]
 
 	Trace Trace

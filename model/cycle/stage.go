@@ -57,7 +57,7 @@ func (s *Solver) stage(a, ve, dve, vc, dvc float64) bool {
 		s.t[i] = t
 		low, high = min(low, t), max(high, t)
 	}
-	s.p = p + dp
+	s.pBefore, s.p = p, p+dp
 	return low > minTemperature && high < maxTemperature
 }
 
