@@ -71,7 +71,7 @@ distributed model of the cycle and its losses, and searches for the designs that
 	})
 	root.PersistentFlags().StringVar(&p.cpuProfile, "cpuprofile", "", "write a processor profile to this file")
 	root.CompletionOptions.HiddenDefaultCmd = true
-	root.AddCommand(p.checkCommand(), p.evaluateCommand(), p.searchCommand(), p.frontCommand(), p.surveyCommand(),
+	root.AddCommand(p.checkCommand(), p.evaluateCommand(), p.searchCommand(), p.frontCommand(), p.polishCommand(), p.surveyCommand(),
 		p.calibrateCommand(), p.fieldsCommand(), p.newCommand(), p.versionCommand())
 	return root
 }
