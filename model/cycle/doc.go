@@ -21,7 +21,7 @@
 //
 //	C dTw/dt = -Q + Qx
 //
-// and Qx is the mean axial conduction into the cell.
+// and Qx is the axial conduction into the cell.
 //
 // # Numerics
 //
@@ -33,12 +33,15 @@
 // so one pass forth and one back solve it. Mass and energy are then advanced by the fluxes, so both
 // are conserved to rounding whatever the linearisation left over.
 //
-// Space: second order. Faces inside the matrix take the mean of both neighbours; faces elsewhere
-// take the upstream cell with a limited slope.
+// Space: second order where profiles are smooth. Faces inside the matrix take the mean of both neighbours; faces elsewhere
+// take the upstream cell with a limited slope. Where gas leaves a tube against the way to the wall's temperature its slope is
+// left out, and in tubes that hold about as much gas as the pistons move, with feeble films, the error falls with the first power of
+// the cell only: of 192 sensible random machines six have more than 2.5 % of error in power.
 //
-// Period: one cycle is a map of the state at its start. The matrix takes thousands of cycles to
-// warm by itself, so after each cycle its mean profile is moved by the solution of the small linear
-// system that makes the time-mean enthalpy flow the same at every section; masses are scaled to
-// the mean pressure; the map so made is accelerated by Anderson's method. The state is accepted
+// Period: one cycle is a map of the state at its start, and of nothing else. The first cycles run on few time steps. The matrix
+// takes thousands of cycles to warm by itself, so after the first its mean profile is moved by the solution of the
+// small linear system that makes the time-mean enthalpy flow the same at every section. Small changes of what is slow
+// (matrix profile, mean pressure, gas of the spaces, walls) are followed through the second cycle, which gives Newton's
+// step from then on (tangent.go, newton.go); Anderson's method makes up for what these slopes leave out. The state is accepted
 // when it repeats and when it balances.
 package cycle
