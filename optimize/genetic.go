@@ -7,8 +7,6 @@ import (
 	"slices"
 
 	"github.com/MaxHalford/eaopt"
-
-	"hotfront/optimize/sample"
 )
 
 const (
@@ -77,6 +75,7 @@ const (
 	streamVary
 	streamNames
 	streamSimplex
+	streamRenew
 )
 
 // runGenetic searches by generations until ask stops it.
@@ -86,7 +85,8 @@ const (
 // best of the population and the children that are in (see survive). The last leadShare-th of what is asked for
 // may still be under way then, so that workers have something to do meanwhile; it takes part in the next
 // selection. Which designs those are is told by their numbers, never by who comes first. Every feasible non-dominated design ever seen stays in
-// the session's archive, however small the population.
+// the session's archive, however small the population. A population that has settled gets a second start (see
+// renewal).
 func runGenetic(s *session, set Settings) error {
 	size := set.Population
 	if size == 0 {
@@ -101,6 +101,7 @@ func runGenetic(s *session, set Settings) error {
 		size:    size,
 		shelter: newShelter(s.space, size),
 		vary:    newVariation(s.space, rand.New(rand.NewPCG(set.Seed, streamVary))),
+		renew:   renewal{rng: rand.New(rand.NewPCG(set.Seed, streamRenew))},
 	}
 	members, err := g.begin(rand.New(rand.NewPCG(set.Seed, streamStart)))
 	if err != nil {
@@ -131,6 +132,7 @@ type generation struct {
 	vary    *variation
 	relax   relaxation
 	shelter shelter
+	renew   renewal
 	scan    scanner
 	barren  int       // broods without a new design, up to now
 	flight  []*member // asked for and not awaited
@@ -151,6 +153,11 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 	for i := range pop.Individuals {
 		members[i] = pop.Individuals[i].Genome.(genome).member
 	}
+	members, err := g.renewed(members)
+	if err != nil {
+		return err
+	}
+	pop.Individuals = pop.Individuals[:min(len(pop.Individuals), len(members))]
 	children, err := g.breed(members)
 	if err != nil {
 		if failed := g.session.await(g.upto); failed != nil {
@@ -175,7 +182,7 @@ func (g *generation) Apply(pop *eaopt.Population) error {
 	g.flight = slices.Clone(g.flight[arrived:])
 	g.learn(all[born:])
 	count := g.session.counted
-	kept := g.shelter.survive(all, g.size, g.relax.level(count), count)
+	kept := g.shelter.survive(all, g.size, g.relax.level(count-g.renew.since), count)
 	alive := make([]bool, len(all))
 	members = make([]*member, len(kept))
 	for k, i := range kept {
@@ -212,23 +219,12 @@ func (g *generation) begin(rng *rand.Rand) ([]*member, error) {
 			first = append(first, sp.member(u))
 		}
 	}
-	for _, u := range sample.Latin(rng, max(0, g.size-len(first)), sp.dims()) {
-		first = append(first, sp.member(u))
-	}
-	first, err := g.ask(first)
+	first, err := g.first(rng, first)
 	if err != nil {
 		return nil, err
 	}
-	if err := g.session.await(g.upto); err != nil {
-		return nil, err
-	}
-	g.learn(first)
 	g.relax = newRelaxation(first, g.size)
-	members := make([]*member, 0, g.size)
-	for _, i := range survive(first, g.size, g.relax.level(0)) {
-		members = append(members, first[i])
-	}
-	return members, nil
+	return choose(first, survive(first, g.size, g.relax.level(0))), nil
 }
 
 // member makes a member that is not evaluated yet and moves u to its values' own places.

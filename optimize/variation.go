@@ -23,10 +23,11 @@ const (
 	exchangeRate = 0.9  // share of crossovers that cross at all
 	exchangeOnly = 0.5  // share of crossovers that swap values without blending them
 	mutateEta    = 20.0 // distribution index of the mutation
+	mutateRate   = 0.65 // share of children by exchange and difference that mutate
 
-	sureExchange = 0.5  // share of children made by exchange whatever its credit
+	sureExchange = 0.4  // share of children made by exchange whatever its credit
 	endShare     = 0.15 // share of parents that are the best design in one aim
-	opFloor      = 0.02 // added to every operator's credit, so that none dies out
+	opFloor      = 0.05 // added to every operator's credit, so that none dies out
 	opRate       = 0.02 // weight of one child in its operator's credit
 	creditAlive  = 0.2  // credit of a child that survives its first selection; one that beats its parent too has 1
 	moreVars     = 0.5  // chance that opFew changes one more variable
@@ -46,7 +47,8 @@ const (
 //	extrapolate  u = p + F (p - p's parent), F uniform in 0.3 to 2
 //	local        u = p + F (n - p) + noise on the scale |n - p|, n a near member, F uniform in -0.5 to 1.5
 //
-// Mutation is polynomial, of one variable in the mean. Numbers that leave the cube stop at its faces, where
+// Mutation is polynomial, of one variable and no more: where the variables have their own local fronts, a step out of one
+// of them is seen only if nothing else is changed for the worse. Numbers that leave the cube stop at its faces, where
 // best designs often lie, but for differ and crossover steps, which are mirrored. A choice without order is
 // never blended: it comes whole from one member, and mutates to any other value with equal chance. Whole
 // numbers take part as numbers and mutate by at least one step.
@@ -295,14 +297,13 @@ func (v *variation) local(u []float64, members []*member) {
 	}
 }
 
-// mutate changes each variable with a chance of one in their number.
+// mutate changes one variable, or none.
 func (v *variation) mutate(u []float64) {
-	chance := 1 / float64(len(u))
-	for k := range u {
-		if v.rng.Float64() < chance {
-			u[k] = v.move(k, u[k], mutateEta)
-		}
+	if v.rng.Float64() >= mutateRate {
+		return
 	}
+	k := v.rng.IntN(len(u))
+	u[k] = v.move(k, u[k], mutateEta)
 }
 
 // nudge changes about half of the variables and at least one, to make a neighbour.
