@@ -73,7 +73,7 @@ func (w *Workspace) run(dst *Performance, e *Engine, c *Corrections, hot float64
 	}
 	cause := w.book(dst, e, c)
 	finest := min(w.steps(e)<<w.Grid.Doublings, cycle.MaxSteps)
-	for w.Cycle.Converged && dst.StepError > stepError && 2*w.Path.Fine.Steps <= finest {
+	for w.Cycle.Converged && w.tooCoarse(dst) && 2*w.Path.Fine.Steps <= finest {
 		w.fillMotion(&w.Path.Fine, e, 2*w.Path.Fine.Steps)
 		w.solver.Refine(&w.Cycle, &w.Path, w.Settings)
 		cause = w.book(dst, e, c)
@@ -104,15 +104,23 @@ func (w *Workspace) book(dst *Performance, e *Engine, c *Corrections) Cause {
 	return None
 }
 
-// stepError is the estimated error of the power by the step of time: that of the cycle's work, larger as the power is less
-// than it, up to five times. 1 without an estimate.
+// stepError is the estimated error of the power by the step of time [-]: that of the cycle's work, larger as the power is less
+// than it. 1 when it is as large as the power, and without an estimate.
 func (w *Workspace) stepError(dst *Performance) float64 {
-	work := w.Cycle.StepError
-	if math.IsNaN(work) {
-		return 1
+	e := w.Cycle.StepError * max(1, math.Abs(dst.PVPower/dst.BrakePower))
+	if e < 1 {
+		return e
 	}
-	return work * min(5, max(1, math.Abs(dst.PVPower/dst.BrakePower)))
+	return 1
 }
+
+// tooCoarse says whether the step of time costs the power more than stepError. A power that is less than a fifth of the
+// cycle's work is held to its work: no number of steps makes a small difference of large works exact.
+func (w *Workspace) tooCoarse(dst *Performance) bool {
+	return dst.StepError > stepError && !(w.Cycle.StepError*mostAmplified <= stepError)
+}
+
+const mostAmplified = 5
 
 // leastHeat is the share of the heat given to the gas in the heater that must come from outside. Below it
 // flow friction heats the engine, not its heat source, and efficiency has no meaning.

@@ -177,6 +177,37 @@ func TestGridError(t *testing.T) {
 	}
 }
 
+// TestStepError holds the estimated error of the power by the time step against a run with eight times the steps on the same
+// cells, on the six machines of the cost page. What is off, on 48 steps and on as many as the estimate asks for, is no more than the
+// estimate and what the solution is accepted with: 2e-4 of the heat each in its balance and in its work.
+func TestStepError(t *testing.T) {
+	fixed, fine := ProductionGrid(), ProductionGrid()
+	fixed.Doublings, fine.Doublings = 0, 0
+	fine.Steps *= 8
+	plain, exact, used := NewWorkspaceGrid(fixed), NewWorkspaceGrid(fine), NewWorkspace()
+	c := costCorrections()
+	doubled := false
+	for _, m := range costMachines() {
+		var p, q, want Performance
+		Evaluate(&p, &m.engine, &c, plain)
+		Evaluate(&q, &m.engine, &c, used)
+		Evaluate(&want, &m.engine, &c, exact)
+		if p.Cause != None || q.Cause != None || want.Cause != None {
+			t.Fatalf("%s: %v, %v, %v", m.name, p.Cause, q.Cause, want.Cause)
+		}
+		off, left := math.Abs(p.BrakePower/want.BrakePower-1), math.Abs(q.BrakePower/want.BrakePower-1)
+		t.Logf("%s: 48 steps off by %.2f %%, estimated %.2f %%; %d steps off by %.2f %%, estimated %.2f %%", m.name, 100*off, 100*p.StepError, q.Steps, 100*left, 100*q.StepError)
+		accepted := 4e-4 * want.HeatIn / math.Abs(want.BrakePower) // with corrections the fourth machine has to be driven
+		if off > p.StepError+accepted || left > q.StepError+accepted {
+			t.Errorf("%s: off by %.2f %% and %.2f %%, estimated %.2f %% and %.2f %%", m.name, 100*off, 100*left, 100*p.StepError, 100*q.StepError)
+		}
+		doubled = doubled || q.Steps > p.Steps
+	}
+	if !doubled {
+		t.Error("no machine had its steps doubled: one is known to need it")
+	}
+}
+
 // TestLossesVanishWithTheirCause: each loss is zero without its cause, and above zero with it.
 func TestLossesVanishWithTheirCause(t *testing.T) {
 	w := NewWorkspace()

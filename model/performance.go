@@ -82,7 +82,7 @@ type Performance struct {
 	Cause  Cause // why there is no result; None for a valid one
 	Cycles int   // cycles to the periodic state
 	Steps  int   // time steps a cycle
-	// StepError is the estimated error of the power by the time step, over the power [-]; 1 when there is no estimate.
+	// StepError is the estimated error of the power by the time step, over the power [-]; 1 also without an estimate.
 	StepError float64
 }
 

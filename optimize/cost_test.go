@@ -163,13 +163,14 @@ func TestMillion(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
+	t.Logf("%d bytes a design on disk; front of %d; %v", info.Size()/1_000_000, len(res.Front), took)
 	status, err := os.ReadFile("/proc/self/status")
 	if err != nil {
-		t.Skip(err)
+		t.Logf("memory not known here: %v", err)
 	}
 	for line := range strings.Lines(string(status)) {
 		if strings.HasPrefix(line, "VmHWM") {
-			t.Logf("%s; %d bytes a design on disk; front of %d; %v", strings.TrimSpace(line), info.Size()/1_000_000, len(res.Front), took)
+			t.Log(strings.TrimSpace(line))
 		}
 	}
 }

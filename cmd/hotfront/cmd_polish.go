@@ -32,7 +32,8 @@ func (p *program) polishCommand() *cobra.Command {
 		Use:   "polish STUDY | DIR --design ID",
 		Short: "Improves one design in all aims at once",
 		Long: `polish looks in the neighbourhood of a design, the start design of a study or one of a run, for a design that beats it:
-better in one aim and worse in none, within all limits. Several Nelder-Mead simplexes lower an achievement function together,
+better in one aim and worse in none, within all limits. A design that misses limits is brought nearer to them first, whatever that
+costs its aims. Several Nelder-Mead simplexes lower an achievement function together,
 which weighs the aims by the extent of the run's front, or for a study by the design's own aims. It never returns a worse design:
 when it finds none that beats it, the design stays as it is. The archive of a run is read only.
 
@@ -115,10 +116,15 @@ func (p *program) polish(ctx context.Context, file string, o *polishOptions) err
 	if err == nil && o.out != "" {
 		err = p.writePolished(s, &r.After.Engine, o.out)
 	}
-	if err == nil && stopped {
-		return failed(exitStopped, fmt.Sprintf("stopped after %d of %d designs", found.Evaluations, o.evaluations))
+	switch {
+	case err != nil:
+		return err
+	case stopped:
+		return failed(exitInterrupted, fmt.Sprintf("stopped after %d of %d designs; this is the best so far, and the same command begins anew", found.Evaluations, o.evaluations))
+	case !r.Feasible():
+		return failed(exitInfeasible, "no design nearby meets all limits")
 	}
-	return err
+	return nil
 }
 
 // writePolished writes the study with a design as its start design.

@@ -4,7 +4,6 @@ import (
 	"bytes"
 	"errors"
 	"math/rand/v2"
-	"os"
 	"os/exec"
 	"path/filepath"
 	"reflect"
@@ -22,10 +21,7 @@ func TestHundredKills(t *testing.T) {
 	if testing.Short() {
 		kills = 10
 	}
-	program := filepath.Join(t.TempDir(), "hotfront")
-	if out, err := exec.Command("go", "build", "-o", program, ".").CombinedOutput(); err != nil {
-		t.Fatalf("build: %v\n%s", err, out)
-	}
+	program := built(t)
 	dir := t.TempDir()
 	const file = "../../studies/examples/sawmill-heat-and-power.yaml"
 	search := func(run, workers string) *exec.Cmd {
@@ -38,17 +34,9 @@ func TestHundredKills(t *testing.T) {
 	random := rand.New(rand.NewPCG(3, 1))
 	killed, unfinished, recorded := 0, 0, 0
 	for i := range kills {
-		c := search("killed", []string{"1", "2", "7"}[i%3])
-		if err := c.Start(); err != nil {
-			t.Fatal(err)
-		}
-		time.Sleep(time.Duration(20+random.IntN(200)) * time.Millisecond)
-		if err := c.Process.Kill(); err == nil {
+		if kill(t, search("killed", []string{"1", "2", "7"}[i%3]), time.Duration(20+random.IntN(200))*time.Millisecond) {
 			killed++
-		} else if !errors.Is(err, os.ErrProcessDone) {
-			t.Fatal(err)
 		}
-		_ = c.Wait() // its error says that it was killed
 		run, err := archive.Read(filepath.Join(dir, "killed"))
 		if errors.Is(err, archive.ErrNoRun) && recorded == 0 {
 			continue // killed before there was a run

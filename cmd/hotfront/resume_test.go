@@ -21,10 +21,7 @@ import (
 // undisturbed one, byte for byte, and so is that of one and of two workers, on every shipped study and on one
 // with a single aim over numbers, which goes to the other driver.
 func TestKilledSearchGoesOn(t *testing.T) {
-	program := filepath.Join(t.TempDir(), "hotfront")
-	if out, err := exec.Command("go", "build", "-o", program, ".").CombinedOutput(); err != nil {
-		t.Fatalf("build: %v\n%s", err, out)
-	}
+	program := built(t)
 	files, err := filepath.Glob("../../studies/examples/*.yaml")
 	if err != nil || len(files) < 3 {
 		t.Fatalf("shipped studies: %v %v", files, err)
@@ -51,17 +48,9 @@ func TestKilledSearchGoesOn(t *testing.T) {
 			}
 			killed := 0
 			for range 3 {
-				c := search("killed", "2")
-				if err := c.Start(); err != nil {
-					t.Fatal(err)
-				}
-				time.Sleep(time.Duration(100+random.IntN(150)) * time.Millisecond)
-				if err := c.Process.Kill(); err == nil {
+				if kill(t, search("killed", "2"), time.Duration(100+random.IntN(150))*time.Millisecond) {
 					killed++
-				} else if !errors.Is(err, os.ErrProcessDone) {
-					t.Fatal(err)
 				}
-				_ = c.Wait() // its error says that it was killed
 			}
 			if out, err := search("killed", "2").CombinedOutput(); err != nil {
 				t.Fatalf("last: %v\n%s", err, out)
@@ -83,6 +72,31 @@ func TestKilledSearchGoesOn(t *testing.T) {
 			}
 		})
 	}
+}
+
+// built makes the program.
+func built(t *testing.T) string {
+	t.Helper()
+	program := filepath.Join(t.TempDir(), "hotfront")
+	if out, err := exec.Command("go", "build", "-o", program, ".").CombinedOutput(); err != nil {
+		t.Fatalf("build: %v\n%s", err, out)
+	}
+	return program
+}
+
+// kill starts a command and kills it after a while, and reports whether it was still there.
+func kill(t *testing.T, c *exec.Cmd, after time.Duration) bool {
+	t.Helper()
+	if err := c.Start(); err != nil {
+		t.Fatal(err)
+	}
+	time.Sleep(after)
+	err := c.Process.Kill()
+	if err != nil && !errors.Is(err, os.ErrProcessDone) {
+		t.Fatal(err)
+	}
+	_ = c.Wait() // its error says that it was killed
+	return err == nil
 }
 
 // recalled gives all designs of a run.

@@ -46,7 +46,57 @@ func (g *tangent) end(s *Solver) {
 		}
 		g.system[c][c]++
 	}
-	g.ready = true
+	g.ready = g.factor()
+}
+
+// factor takes the system apart into triangles, in place, its rows exchanged as pivot says. Reports false when it has no
+// solution.
+func (g *tangent) factor() bool {
+	k, a := g.columns, &g.system
+	for i := range k {
+		best := i
+		for row := i + 1; row < k; row++ {
+			if math.Abs(a[row][i]) > math.Abs(a[best][i]) {
+				best = row
+			}
+		}
+		g.pivot[i] = best
+		if best != i {
+			a[i], a[best] = a[best], a[i]
+		}
+		if !(math.Abs(a[i][i]) > 0) {
+			return false
+		}
+		inv := 1 / a[i][i]
+		for row := i + 1; row < k; row++ {
+			q := a[row][i] * inv
+			a[row][i] = q
+			for c := i + 1; c < k; c++ {
+				a[row][c] -= q * a[i][c]
+			}
+		}
+	}
+	return true
+}
+
+// solve takes a right-hand side of the system to its solution, in place.
+func (g *tangent) solve(b *[maxColumns]float64) {
+	k, a := g.columns, &g.system
+	for i := range k {
+		p := g.pivot[i]
+		b[i], b[p] = b[p], b[i]
+	}
+	for i := range k {
+		for c := range i {
+			b[i] -= a[i][c] * b[c]
+		}
+	}
+	for i := k - 1; i >= 0; i-- {
+		for c := i + 1; c < k; c++ {
+			b[i] -= a[i][c] * b[c]
+		}
+		b[i] /= a[i][i]
+	}
 }
 
 // measure is what a packed state has of column c, in the unit of its change.
@@ -77,51 +127,19 @@ func (g *tangent) measure(s *Solver, c int, x *[maxStates]float64) float64 {
 //	g + W c,   (1 - C W) c = C (g - x),
 //
 // W the slopes and C the measures of the columns: Newton's step for x = g(x), with slopes of zero for what has no column.
-// When the system has no solution the state stays.
 func (g *tangent) move(s *Solver, x *[maxStates]float64) {
 	var y, r [maxStates]float64
 	size := s.pack(&y)
 	for i := range size {
 		r[i] = y[i] - x[i]
 	}
-	k, a := g.columns, &g.solved
-	for c := range k {
-		copy(a[c][:k], g.system[c][:k])
-		a[c][k] = g.measure(s, c, &r)
+	var b [maxColumns]float64
+	for c := range g.columns {
+		b[c] = g.measure(s, c, &r)
 	}
-	for i := range k {
-		best := i
-		for row := i + 1; row < k; row++ {
-			if math.Abs(a[row][i]) > math.Abs(a[best][i]) {
-				best = row
-			}
-		}
-		if best != i {
-			a[i], a[best] = a[best], a[i]
-		}
-		if !(math.Abs(a[i][i]) > 0) {
-			return
-		}
-		inv := 1 / a[i][i]
-		for row := i + 1; row < k; row++ {
-			q := a[row][i] * inv
-			if q == 0 {
-				continue
-			}
-			for c := i + 1; c <= k; c++ {
-				a[row][c] -= q * a[i][c]
-			}
-		}
-	}
-	for i := k - 1; i >= 0; i-- {
-		v := a[i][k]
-		for c := i + 1; c < k; c++ {
-			v -= a[i][c] * a[c][k]
-		}
-		a[i][k] = v / a[i][i]
-	}
-	for c := range k {
-		v, slope := a[c][k], &g.slopes[c]
+	g.solve(&b)
+	for c := range g.columns {
+		v, slope := b[c], &g.slopes[c]
 		for i := range size {
 			y[i] += v * slope[i]
 		}

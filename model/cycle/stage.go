@@ -125,8 +125,7 @@ func (s *Solver) middle(mid int) (dT, dp float64) {
 	var lh, ll, lr float64 // the last face of the left chain
 	var rh, rl, rr float64 // and of the right one
 	// What does not wait for the cell before comes first in each line: the way from one division to the next is what takes time.
-	i, k := 0, n-1
-	for ; k > mid; i, k = i+1, k-1 {
+	for i, k := 0, n-1; i < mid; i, k = i+1, k-1 {
 		c, f := &s.balance[i], &s.flux[i]
 		out, gain := f.h-c.h, lh-f.h
 		D := c.t - lS
@@ -137,6 +136,9 @@ func (s *Solver) middle(mid int) (dT, dp float64) {
 		lh, ll, lr = f.h, f.left, f.right
 		o := &s.reduced[i]
 		o.A, o.B, o.S, o.A1, o.B1, o.S1 = lA, lB, lS, lA1, lB1, lS1
+		if k == mid { // an even number of cells leaves one more on the left
+			break
+		}
 
 		// The same from the other end, where flows count against their sign.
 		c, f = &s.balance[k], &s.flux[k-1]
@@ -149,18 +151,6 @@ func (s *Solver) middle(mid int) (dT, dp float64) {
 		rh, rl, rr = f.h, f.left, f.right
 		o = &s.reduced[k]
 		o.A, o.B, o.S, o.A1, o.B1, o.S1 = rA, rB, rS, rA1, rB1, rS1
-	}
-	if i < mid { // one more on the left when the number of cells is even
-		c, f := &s.balance[i], &s.flux[i]
-		out, gain := f.h-c.h, lh-f.h
-		D := c.t - lS
-		inv := 1 / ((c.x + f.left - lr - out*c.t) - gain*lS - ll*lS1)
-		z, v := (c.z-out*c.u)+(ll*lA1+gain*lA), (c.v+out*c.p)+(ll*lB1+gain*lB)
-		lA, lB, lS = (c.u+lA)-(D*z)*inv, (lB-c.p)-(D*v)*inv, (D*f.right)*inv
-		lA1, lB1, lS1 = z*inv, v*inv, -f.right*inv
-		lh, ll, lr = f.h, f.left, f.right
-		o := &s.reduced[i]
-		o.A, o.B, o.S, o.A1, o.B1, o.S1 = lA, lB, lS, lA1, lB1, lS1
 	}
 	c := &s.balance[mid]
 	il, ir := lh-c.h, rh-c.h

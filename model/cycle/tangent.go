@@ -31,13 +31,13 @@ type tangent struct {
 
 	b1, s1 [MaxCells]float64 // of the elimination, the same for all columns
 
-	slopes [maxColumns][maxStates]float64      // change of the state after the cycle, as packed, by each column's change
-	system [maxColumns][maxColumns + 1]float64 // identity less the slopes of the columns' measures
-	solved [maxColumns][maxColumns + 1]float64 // the same under elimination, with a right-hand side
+	slopes [maxColumns][maxStates]float64  // change of the state after the cycle, as packed, by each column's change
+	system [maxColumns][maxColumns]float64 // identity less the slopes of the columns' measures, taken apart by factor
+	pivot  [maxColumns]int                 // the row that took the place of each
 }
 
-// maxColumns is the largest number of changes followed: a path has two spaces and two tubes at least, so the matrix cells and
-// six more never exceed it by more than the cells allow.
+// maxColumns is the largest number of changes followed: of the cells all but two spaces and two tubes may be matrix, and there
+// are at most six columns beside those of the matrix.
 const maxColumns = MaxCells + 2
 
 // tangentSteps is how many steps the changes take through a cycle at least; twice as many save 2 % of the time steps.

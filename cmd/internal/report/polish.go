@@ -81,13 +81,34 @@ func digits(o *studies.Output, v float64) string {
 	return studies.FormatSI(v, o.Quantity, o.Unit, 10)
 }
 
+// Feasible says whether the result meets all limits.
+func (p *Polish) Feasible() bool { return p.meets(&p.After) }
+
+func (p *Polish) meets(d *Polished) bool {
+	for _, r := range p.Study.LimitResults(&d.Engine, &d.Performance) {
+		if !r.Met {
+			return false
+		}
+	}
+	return true
+}
+
+// outcome says in words what polishing has done.
+func (p *Polish) outcome() string {
+	switch {
+	case !p.Improved:
+		return "no better one found: the design stays as it is"
+	case !p.Feasible():
+		return "one found that is nearer to its limits, none that meets them"
+	case !p.meets(&p.Before):
+		return "one found that meets all limits, as the design did not"
+	}
+	return "a better one found"
+}
+
 // Table writes what has changed for people.
 func (p *Polish) Table(w io.Writer, s Style) error {
-	said := "no better one found: the design stays as it is"
-	if p.Improved {
-		said = "a design that beats it was found"
-	}
-	if _, err := fmt.Fprintf(w, "%s: %d designs tried, %s.\n\n", p.Study.Name, p.Evaluations, said); err != nil {
+	if _, err := fmt.Fprintf(w, "%s: %d designs tried, %s.\n\n", p.Study.Name, p.Evaluations, p.outcome()); err != nil {
 		return err
 	}
 	aims := Table{Title: "Aims", Head: [][]string{{"aim", "before", "after", "change", "unit"}}, Left: []int{4}}
@@ -109,11 +130,15 @@ func (p *Polish) Table(w io.Writer, s Style) error {
 		f, _ := studies.FieldNamed(p.Study.Fields(), p.Study.Free[i].Path)
 		design.Rows = append(design.Rows, []string{f.Path, f.Format(f.Get(&p.Before.Engine)), f.Format(f.Get(&p.After.Engine)), unit(f.Unit)})
 	}
-	limits := Table{Title: "\nLimits", Head: [][]string{{"limit", "before", "after", "unit", "bound"}}, Left: []int{3, 4}}
+	limits := Table{Title: "\nLimits", Head: [][]string{{"limit", "before", "after", "unit", "bound", ""}}, Left: []int{3, 4, 5}}
 	after := p.Study.LimitResults(&p.After.Engine, &p.After.Performance)
 	for i, b := range p.Study.LimitResults(&p.Before.Engine, &p.Before.Performance) {
 		l := &p.Study.Limits[i]
-		limits.Rows = append(limits.Rows, []string{b.Name, l.Format(b.Value), l.Format(after[i].Value), unit(l.Unit), l.BoundText()})
+		met := "met"
+		if !after[i].Met {
+			met = "NOT MET"
+		}
+		limits.Rows = append(limits.Rows, []string{b.Name, l.Format(b.Value), l.Format(after[i].Value), unit(l.Unit), l.BoundText(), met})
 	}
 	for _, t := range []*Table{&aims, &design, &limits} {
 		if len(t.Rows) == 0 {
@@ -123,5 +148,6 @@ func (p *Polish) Table(w io.Writer, s Style) error {
 			return err
 		}
 	}
-	return nil
+	_, err := fmt.Fprintf(w, "\n%s Model version %s.\n%s\n", correctionsText(p.Study), model.Version, Caution)
+	return err
 }
